@@ -1,0 +1,71 @@
+using System.CommandLine;
+using ChainSolve.Cli.Terminal;
+using ChainSolve.Numerics.Iteration;
+
+namespace ChainSolve.Cli.Commands;
+
+/// <summary>Runs one command from its words to its exit code.</summary>
+internal static class CommandRunner
+{
+    // Words that begin with @ are file names like any other.
+    private static readonly ParserConfiguration Parsing = new() { ResponseFileTokenReplacer = null };
+
+    /// <summary>Runs a command.</summary>
+    /// <param name="words">The words behind the name of the program.</param>
+    /// <param name="streams">What it reads and writes.</param>
+    /// <param name="signals">Tells when the process is to stop.</param>
+    /// <returns>The exit code.</returns>
+    public static async Task<int> RunAsync(string[] words, ProcessStreams streams, SignalWatch signals)
+    {
+        try
+        {
+            var parsed = CommandTree.Build(streams).Parse(words, Parsing);
+            if (parsed.Errors.Count > 0)
+            {
+                throw new UsageException(UsageMessages.Describe(parsed));
+            }
+
+            // Signals are ours: the parser's own handling would end the process without an exit code that tells why.
+            var invocation = new InvocationConfiguration
+            {
+                EnableDefaultExceptionHandler = false,
+                ProcessTerminationTimeout = null,
+                Output = streams.Answer,
+                Error = streams.Error,
+            };
+            var code = await parsed.InvokeAsync(invocation, signals.Token);
+            await streams.Answer.FlushAsync(CancellationToken.None);
+            return code;
+        }
+        catch (Exception exception)
+        {
+            return Explain(exception, streams.Error, signals);
+        }
+    }
+
+    private static int Explain(Exception exception, TextWriter error, SignalWatch signals)
+    {
+        switch (exception)
+        {
+            case UsageException:
+                error.WriteLine($"chainsolve: {exception.Message}");
+                error.WriteLine("chainsolve --help lists commands and options");
+                return ExitCodes.Usage;
+            case OperationCanceledException when signals.ExitCode is { } code:
+                error.WriteLine("chainsolve: stopped");
+                return code;
+            case LimitExceededException:
+                error.WriteLine($"chainsolve: {exception.Message}");
+                return ExitCodes.LimitHit;
+            case NotConvergedException:
+                error.WriteLine($"chainsolve: {exception.Message}");
+                return ExitCodes.AccuracyNotReached;
+            case FileProblemException or IOException or UnauthorizedAccessException:
+                error.WriteLine($"chainsolve: {exception.Message}");
+                return ExitCodes.FileProblem;
+            default:
+                error.WriteLine($"chainsolve: internal fault, please report it with the model: {exception}");
+                return ExitCodes.InternalFault;
+        }
+    }
+}

@@ -1,0 +1,87 @@
+using System.Globalization;
+
+namespace ChainSolve.Cli.Commands;
+
+/// <summary>Reads the values of options.</summary>
+internal static class ValueReader
+{
+    private static readonly string[] Jobs = ["transient", "stationary", "absorption"];
+
+    public static (string Name, string Value) Setting(string text)
+    {
+        var at = text.IndexOf('=', StringComparison.Ordinal);
+        if (at <= 0 || at == text.Length - 1)
+        {
+            throw new UsageException($"'--set {text}' is not NAME=VALUE, for example --set mttr=\"4 h\"");
+        }
+
+        return (text[..at].Trim(), text[(at + 1)..].Trim());
+    }
+
+    public static IReadOnlyDictionary<string, string> Methods(string[] texts)
+    {
+        var methods = new Dictionary<string, string>(StringComparer.Ordinal);
+        foreach (var text in texts)
+        {
+            var at = text.IndexOf('=', StringComparison.Ordinal);
+            if (at <= 0 || at == text.Length - 1)
+            {
+                throw new UsageException($"'--method {text}' is not JOB=NAME, for example --method transient=uniformization");
+            }
+
+            var job = OneOf("--method", text[..at], Jobs);
+            if (!methods.TryAdd(job, text[(at + 1)..]))
+            {
+                throw new UsageException($"'--method {job}=' is given twice");
+            }
+        }
+
+        return methods;
+    }
+
+    public static double Positive(string option, string text, double below)
+    {
+        const NumberStyles styles = NumberStyles.AllowDecimalPoint | NumberStyles.AllowExponent | NumberStyles.AllowLeadingSign;
+        if (double.TryParse(text, styles, CultureInfo.InvariantCulture, out var value) && value > 0 && value < below)
+        {
+            return value;
+        }
+
+        var range = below == double.MaxValue ? "above 0" : FormattableString.Invariant($"above 0 and below {below:R}");
+        throw new UsageException($"'{option} {text}' is not a number {range}, for example {option} 1e-9");
+    }
+
+    public static long Whole(string option, string text, long low, long high)
+    {
+        if (long.TryParse(text.Replace("_", "", StringComparison.Ordinal), NumberStyles.None, CultureInfo.InvariantCulture, out var value)
+            && value >= low && value <= high)
+        {
+            return value;
+        }
+
+        throw new UsageException(FormattableString.Invariant($"'{option} {text}' is not a whole number from {low} to {high}"));
+    }
+
+    public static TimeSpan Duration(string option, string text)
+    {
+        var time = TimeText.Parse(option, text);
+        if (time.Unit.Length == 0)
+        {
+            throw new UsageException($"'{option} {text}' needs a unit, for example {option} {text.Trim()}s");
+        }
+
+        // Timers of the platform end at about 24 days; nobody waits longer.
+        var hours = Math.Min(time.Hours, 24 * 20);
+        return hours > 0 ? TimeSpan.FromHours(hours) : throw new UsageException($"'{option} {text}' leaves no time");
+    }
+
+    public static string OneOf(string option, string text, string[] known)
+    {
+        if (known.Contains(text, StringComparer.Ordinal))
+        {
+            return text;
+        }
+
+        throw new UsageException($"'{option}' does not know '{text}'; known: {string.Join(", ", known)}{Suggestions.Hint(text, known)}");
+    }
+}

@@ -1,0 +1,26 @@
+namespace ChainSolve.Cli.Terminal;
+
+/// <summary>Where the answer goes: standard output or a file.</summary>
+internal sealed class AnswerSink(ProcessStreams streams, string? path)
+{
+    /// <summary>Writes the answer.</summary>
+    /// <exception cref="FileProblemException">It could not be written.</exception>
+    public void Write(Action<TextWriter> write)
+    {
+        if (path is not null && path != "-")
+        {
+            AtomicFile.Write(path, write);
+            return;
+        }
+
+        try
+        {
+            write(streams.Answer);
+            streams.Answer.Flush();
+        }
+        catch (IOException exception)
+        {
+            throw new FileProblemException($"standard output could not be written: {exception.Message}", exception);
+        }
+    }
+}
