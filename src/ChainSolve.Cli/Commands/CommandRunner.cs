@@ -20,9 +20,9 @@ internal static class CommandRunner
         try
         {
             var parsed = CommandTree.Build(streams).Parse(words, Parsing);
-            if (parsed.Errors.Count > 0)
+            if (UsageMessages.Describe(parsed) is { } message)
             {
-                throw new UsageException(UsageMessages.Describe(parsed));
+                throw new UsageException(message);
             }
 
             // Signals are ours: the parser's own handling would end the process without an exit code that tells why.

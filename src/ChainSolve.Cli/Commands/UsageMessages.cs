@@ -6,14 +6,27 @@ namespace ChainSolve.Cli.Commands;
 /// <summary>Says in our own words what the parser of the command line did not understand.</summary>
 internal static class UsageMessages
 {
-    /// <summary>One short message, without a full stop.</summary>
-    public static string Describe(ParseResult parsed)
+    /// <summary>One short message, without a full stop; null where all was understood.</summary>
+    public static string? Describe(ParseResult parsed)
     {
         var command = parsed.CommandResult.Command;
-        if (parsed.UnmatchedTokens.Count > 0)
+        if (MisspeltOption(parsed) is { } option)
         {
-            return Unmatched(parsed.UnmatchedTokens[0], command);
+            return Unmatched(option, command);
         }
+
+        return parsed.UnmatchedTokens.Count > 0 ? Unmatched(parsed.UnmatchedTokens[0], command)
+            : parsed.Errors.Count > 0 ? OfErrors(parsed, command)
+            : null;
+    }
+
+    // The parser takes an unknown option for an argument where one is still free.
+    private static string? MisspeltOption(ParseResult parsed) => parsed.Tokens
+        .TakeWhile(token => token.Type != TokenType.DoubleDash)
+        .FirstOrDefault(token => token.Type == TokenType.Argument && token.Value.StartsWith("--", StringComparison.Ordinal))?.Value;
+
+    private static string OfErrors(ParseResult parsed, Command command)
+    {
 
         foreach (var error in parsed.Errors)
         {
@@ -21,6 +34,8 @@ internal static class UsageMessages
             {
                 case OptionResult option when option.Tokens.Count > 1:
                     return $"'{option.Option.Name}' is given more than once";
+                case OptionResult option when option.Option.HelpName is null:
+                    return $"'{option.Option.Name}' takes no value";
                 case OptionResult option:
                     return $"'{option.Option.Name}' needs a value: {option.Option.Name} {option.Option.HelpName}";
                 case ArgumentResult argument:
