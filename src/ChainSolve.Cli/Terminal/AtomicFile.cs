@@ -49,7 +49,8 @@ internal static class AtomicFile
     private static string FinalTarget(string path)
     {
         var full = Path.GetFullPath(path);
-        return File.ResolveLinkTarget(full, returnFinalTarget: true)?.FullName ?? full;
+        var link = new FileInfo(full);
+        return link.LinkTarget is null ? full : link.ResolveLinkTarget(returnFinalTarget: true)?.FullName ?? full;
     }
 
     // Renaming a file over a device would replace the device.
