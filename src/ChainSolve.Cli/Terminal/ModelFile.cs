@@ -14,7 +14,11 @@ internal static class ModelFile
 
     /// <summary>Reads a model.</summary>
     /// <exception cref="FileProblemException">It could not be read.</exception>
-    public static byte[] Read(string path, ProcessStreams streams)
+    public static async Task<byte[]> ReadAsync(string path, ProcessStreams streams, CancellationToken cancellation) =>
+        // A read that waits for a pipe or a terminal cannot be cancelled, but it can be left behind.
+        await Task.Run(() => Read(path, streams), cancellation).WaitAsync(cancellation);
+
+    private static byte[] Read(string path, ProcessStreams streams)
     {
         try
         {
