@@ -8,12 +8,24 @@ namespace ChainSolve.Numerics.Operators;
 public sealed class Generator
 {
     private readonly Lazy<SparseRows> columns;
+    private readonly SharedPattern pattern;
 
-    internal Generator(SparseRows rows)
+    internal Generator(SparseRows rows, SharedPattern? pattern = null)
     {
         Rows = rows;
-        columns = new Lazy<SparseRows>(rows.Transpose);
+        this.pattern = pattern ?? new SharedPattern(rows);
+        columns = new Lazy<SparseRows>(() => Rows.Transpose(this.pattern.Transposed));
         ExitRates = rows.RowSums();
+        foreach (var rate in ExitRates)
+        {
+            MaxExitRate = Math.Max(MaxExitRate, rate);
+        }
+
+        if (double.IsInfinity(MaxExitRate))
+        {
+            throw new ArgumentException(
+                $"The rates out of state {Array.IndexOf(ExitRates, MaxExitRate)} add up to more than a double holds. Choose a larger unit of time.");
+        }
     }
 
     /// <summary>The number of states.</summary>
@@ -23,7 +35,7 @@ public sealed class Generator
     public long TransitionCount => Rows.EntryCount;
 
     /// <summary>The largest exit rate of any state; 0 for a chain without transitions.</summary>
-    public double MaxExitRate => ExitRates.Length == 0 ? 0 : ExitRates.Max();
+    public double MaxExitRate { get; }
 
     /// <summary>The rates out of each state: row i holds the targets of i, ascending.</summary>
     internal SparseRows Rows { get; }
@@ -34,13 +46,89 @@ public sealed class Generator
     /// <summary>The sum of the rates out of each state.</summary>
     internal double[] ExitRates { get; }
 
+    /// <summary>What follows from the places of the entries alone, shared with refilled twins.</summary>
+    internal SharedPattern Pattern => pattern;
+
+    /// <summary>Makes a generator of rows that are at hand, without sorting and without copying.</summary>
+    /// <param name="rowOffsets">The entries of row i stand at <c>[rowOffsets[i], rowOffsets[i + 1])</c>; one more than there are states.</param>
+    /// <param name="targets">The state that each entry leads to; ascending within a row, never the row's own state.</param>
+    /// <param name="rates">The rate of each entry; finite and not negative. A zero stays in the pattern.</param>
+    /// <remarks>The arrays are taken over: do not write to them afterwards. Costs one pass over the entries.</remarks>
+    /// <exception cref="ArgumentException">The arrays do not describe a generator; the message says where.</exception>
+    public static Generator FromRows(long[] rowOffsets, int[] targets, double[] rates)
+    {
+        ArgumentNullException.ThrowIfNull(rowOffsets);
+        ArgumentNullException.ThrowIfNull(targets);
+        ArgumentNullException.ThrowIfNull(rates);
+        if (rowOffsets.Length < 2)
+        {
+            throw new ArgumentException("A chain has at least one state: two offsets.", nameof(rowOffsets));
+        }
+
+        if (rowOffsets[0] != 0 || rowOffsets[^1] != targets.LongLength || targets.LongLength != rates.LongLength)
+        {
+            throw new ArgumentException(
+                $"The offsets span {rowOffsets[0]} to {rowOffsets[^1]}, but there are {targets.LongLength} targets and {rates.LongLength} rates.",
+                nameof(rowOffsets));
+        }
+
+        var rows = new SparseRows(rowOffsets.Length - 1, rowOffsets, targets, rates);
+        rows.CheckPlaces();
+        rows.CheckValues(nameof(rates));
+        return new Generator(rows);
+    }
+
     /// <summary>The rate from one state to another; 0 where there is no transition.</summary>
     public double Rate(int from, int to)
     {
-        ArgumentOutOfRangeException.ThrowIfNegative(from);
-        ArgumentOutOfRangeException.ThrowIfGreaterThanOrEqual(from, StateCount);
-        ArgumentOutOfRangeException.ThrowIfNegative(to);
-        ArgumentOutOfRangeException.ThrowIfGreaterThanOrEqual(to, StateCount);
+        CheckState(from, nameof(from));
+        CheckState(to, nameof(to));
         return Rows.Find(from, to);
+    }
+
+    /// <summary>The sum of the rates out of a state.</summary>
+    public double ExitRate(int state)
+    {
+        CheckState(state, nameof(state));
+        return ExitRates[state];
+    }
+
+    /// <summary>The transitions out of a state, by ascending target.</summary>
+    /// <exception cref="ArgumentOutOfRangeException">There is no such state.</exception>
+    public IEnumerable<Transition> TransitionsFrom(int state)
+    {
+        CheckState(state, nameof(state));
+        return Walk(state);
+    }
+
+    /// <summary>The same pattern with other rates; what was found of the pattern is kept.</summary>
+    /// <param name="rates">One rate for each stored entry, row after row in the order of <see cref="TransitionsFrom"/>; zeros are legal.</param>
+    /// <remarks>The array is taken over: do not write to it afterwards.</remarks>
+    /// <exception cref="ArgumentException">The number of rates is not <see cref="TransitionCount"/>, or one is negative or not finite.</exception>
+    public Generator WithRates(double[] rates)
+    {
+        ArgumentNullException.ThrowIfNull(rates);
+        if (rates.LongLength != TransitionCount)
+        {
+            throw new ArgumentException($"{TransitionCount} rates are needed and {rates.LongLength} were given.", nameof(rates));
+        }
+
+        var rows = new SparseRows(Rows.Count, Rows.Offsets, Rows.Targets, rates);
+        rows.CheckValues(nameof(rates));
+        return new Generator(rows, pattern);
+    }
+
+    private IEnumerable<Transition> Walk(int state)
+    {
+        for (var e = Rows.Offsets[state]; e < Rows.Offsets[state + 1]; e++)
+        {
+            yield return new Transition(Rows.Targets[e], Rows.Values[e]);
+        }
+    }
+
+    private void CheckState(int state, string name)
+    {
+        ArgumentOutOfRangeException.ThrowIfNegative(state, name);
+        ArgumentOutOfRangeException.ThrowIfGreaterThanOrEqual(state, StateCount, name);
     }
 }

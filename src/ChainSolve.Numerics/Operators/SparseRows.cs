@@ -50,7 +50,8 @@ internal sealed class SparseRows
         return sums;
     }
 
-    public SparseRows Transpose()
+    /// <summary>The places of the transposed matrix, rows ascending within a column.</summary>
+    public (long[] Offsets, int[] Targets) TransposePattern()
     {
         var offsets = new long[Count + 1];
         for (long e = 0; e < EntryCount; e++)
@@ -65,17 +66,63 @@ internal sealed class SparseRows
 
         var next = (long[])offsets.Clone();
         var targets = new int[EntryCount];
-        var values = new double[EntryCount];
         for (var i = 0; i < Count; i++)
         {
             for (var e = Offsets[i]; e < Offsets[i + 1]; e++)
             {
-                var at = next[Targets[e]]++;
-                targets[at] = i;
-                values[at] = Values[e];
+                targets[next[Targets[e]]++] = i;
             }
         }
 
-        return new SparseRows(Count, offsets, targets, values);
+        return (offsets, targets);
+    }
+
+    /// <summary>The transposed matrix on places that <see cref="TransposePattern"/> gave for this pattern.</summary>
+    public SparseRows Transpose((long[] Offsets, int[] Targets) places)
+    {
+        var next = (long[])places.Offsets.Clone();
+        var values = new double[EntryCount];
+        for (long e = 0; e < EntryCount; e++)
+        {
+            values[next[Targets[e]]++] = Values[e];
+        }
+
+        return new SparseRows(Count, places.Offsets, places.Targets, values);
+    }
+
+    public void CheckPlaces()
+    {
+        for (var i = 0; i < Count; i++)
+        {
+            if (Offsets[i + 1] < Offsets[i] || Offsets[i + 1] > EntryCount)
+            {
+                throw new ArgumentException($"The offsets fall or run past the end at state {i}.");
+            }
+
+            for (var e = Offsets[i]; e < Offsets[i + 1]; e++)
+            {
+                var target = Targets[e];
+                if (target < 0 || target >= Count || target == i)
+                {
+                    throw new ArgumentException($"State {i} has a transition to {target}; it must be another state from 0 to {Count - 1}.");
+                }
+
+                if (e > Offsets[i] && target <= Targets[e - 1])
+                {
+                    throw new ArgumentException($"The targets of state {i} do not ascend: {Targets[e - 1]} is followed by {target}.");
+                }
+            }
+        }
+    }
+
+    public void CheckValues(string name)
+    {
+        for (long e = 0; e < EntryCount; e++)
+        {
+            if (!double.IsFinite(Values[e]) || Values[e] < 0)
+            {
+                throw new ArgumentException($"Rate {e} is {Values[e]}; rates must be finite and not negative.", name);
+            }
+        }
     }
 }
