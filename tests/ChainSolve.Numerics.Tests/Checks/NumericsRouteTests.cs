@@ -1,0 +1,64 @@
+using ChainSolve.Numerics.Absorption;
+using ChainSolve.Numerics.Operators;
+using ChainSolve.Numerics.Stationary;
+using ChainSolve.Numerics.Transient;
+using ChainSolve.Tests.Shared.Checks;
+using ChainSolve.Tests.Shared.Reference;
+
+namespace ChainSolve.Numerics.Tests.Checks;
+
+/// <summary>Every value from outside through the solvers, by each method that can take it.</summary>
+public class NumericsRouteTests
+{
+    private static readonly string[] AbsorptionAsks = ["mean-time", "moment", "total-until", "ends-in", "conditional-mean-time"];
+
+    public static TheoryData<string, string> StationaryCases =>
+        Pairs(
+            IsStationary,
+            check => SolverCatalog.Stationary.Where(s => IsIrreducible(check) ? s.Cost(Generator(check)) < 1e10 : s.Name.Contains("gth", StringComparison.Ordinal)).Select(s => s.Name));
+
+    public static TheoryData<string, string> AbsorptionCases =>
+        Pairs(c => AbsorptionAsks.Contains(c.Ask.What), _ => SolverCatalog.Absorption.Select(s => s.Name));
+
+    [Theory]
+    [MemberData(nameof(StationaryCases))]
+    public void Stationary_ACase_HasItsDigits(string id, string method) =>
+        Holds(id, SolverCatalog.Stationary.First(s => s.Name == method), SolverCatalog.Absorption[0]);
+
+    [Theory]
+    [MemberData(nameof(AbsorptionCases))]
+    public void Absorption_ACase_HasItsDigits(string id, string method) =>
+        Holds(id, SolverCatalog.Stationary[0], SolverCatalog.Absorption.First(s => s.Name == method));
+
+    private static bool IsStationary(CheckCase check) =>
+        check.Chain is not null && check.Ask is { At: null, Over: null, Share: null } && !AbsorptionAsks.Contains(check.Ask.What);
+
+    private static Generator Generator(CheckCase check) => NumericsAnswers.Build(ConcreteChain.From(check.Chain!));
+
+    /// <summary>Whether the whole chain is one class; a chain with several is solved class by class.</summary>
+    private static bool IsIrreducible(CheckCase check)
+    {
+        var chain = ConcreteChain.From(check.Chain!);
+        return chain.Count > 25 || new ReferenceChain(chain.Count, chain.Moves).Reachable().Cast<bool>().All(r => r);
+    }
+
+    private static TheoryData<string, string> Pairs(Func<CheckCase, bool> belongs, Func<CheckCase, IEnumerable<string>> methods)
+    {
+        var pairs = new TheoryData<string, string>();
+        foreach (var check in CheckFiles.All.Where(belongs))
+        {
+            foreach (var method in methods(check))
+            {
+                pairs.Add(check.Id, method);
+            }
+        }
+
+        return pairs;
+    }
+
+    private static void Holds(string id, IStationarySolver stationary, IAbsorptionSolver absorption, ITransientSolver? transient = null)
+    {
+        var check = CheckFiles.Find(id);
+        CheckVerdict.Holds(check, new NumericsAnswers(stationary, absorption, transient).Answer(check)!.Value);
+    }
+}
