@@ -1,0 +1,173 @@
+using ChainSolve.Numerics.Arithmetic;
+using ChainSolve.Numerics.Estimates;
+using ChainSolve.Numerics.Iteration;
+
+namespace ChainSolve.Numerics.Transient;
+
+/// <summary>
+/// One chain, start and set of rewards, ready to be asked at any times: what was squared for earlier times is kept on demand.
+/// Not safe to share between threads.
+/// </summary>
+internal sealed class SquaringRun
+{
+    // Totals beyond this leave no room for products of two doubles.
+    private const double LargestTotal = 1e280;
+
+    private readonly TransientProblem problem;
+    private readonly ReachedChain? chain;
+    private readonly TransitionLadder? ladder;
+    private readonly WideBlock start;
+    private readonly DoubleDouble mass;
+    private readonly WideBlock rates;
+    private readonly WideBlock totals;
+
+    /// <summary>Prepares a run; hardly anything is computed yet.</summary>
+    /// <param name="problem">What is asked; its times do not matter.</param>
+    /// <param name="keepsAll">Whether further times will be asked later; costs the memory of a matrix a doubling of time.</param>
+    public SquaringRun(TransientProblem problem, bool keepsAll)
+    {
+        ProblemCheck.Check(problem);
+        this.problem = problem;
+        var reached = ReachedChain.Reach(problem.Generator, problem.Start, problem.Alive);
+        chain = reached.Contains(true) ? ReachedChain.Of(problem.Generator, reached) : null;
+        int[] states = chain?.States ?? [];
+        start = new WideBlock(1, chain?.Count ?? 0);
+        for (var k = 0; k < states.Length; k++)
+        {
+            start.High[k] = problem.Start[states[k]];
+            mass += start.High[k];
+        }
+
+        rates = WideBlock.FromColumns(problem.Rates, states, start.Columns);
+        totals = WideBlock.FromColumns(problem.Totals, states, start.Columns);
+        ladder = chain is { LargestExit: > 0 } ? new TransitionLadder(chain, totals, keepsAll) : null;
+    }
+
+    /// <summary>The values at some times, in their order.</summary>
+    /// <exception cref="NotConvergedException">A total is beyond the range of a double.</exception>
+    public TransientResult At(IReadOnlyList<double> times, SolveContext context)
+    {
+        double[] distinct = [.. times.Distinct().Order()];
+        foreach (var time in distinct)
+        {
+            ProblemCheck.Time(time, nameof(times));
+            CheckRange(time);
+        }
+
+        var rows = ladder is null ? [.. distinct.Select(Still)] : Climb(distinct, ladder, context);
+        var answers = distinct.Zip(rows).ToDictionary(p => p.First, p => Read(p.First, p.Second, context));
+        return new TransientResult
+        {
+            Rates = [.. times.Select(t => answers[t].Rates)],
+            Totals = [.. times.Select(t => answers[t].Totals)],
+            Distributions = problem.WantsDistributions ? [.. times.Select(t => (double[])answers[t].Distribution.Clone())] : null,
+            DistributionBounds = problem.WantsDistributions ? [.. times.Select(t => (double[])answers[t].Bounds.Clone())] : null,
+            How = ladder is null
+                ? "nothing moves"
+                : $"squaring in two doubles, {start.Columns} states, {ladder.LevelCount} levels from a step of 2^{ladder.StepPower}",
+        };
+    }
+
+    /// <summary>The distributions and totals at ascending times. Levels are met once, ascending, so that none need be kept.</summary>
+    private (WideBlock Row, WideBlock Totals)[] Climb(double[] times, TransitionLadder steps, SolveContext context)
+    {
+        var states = new (WideBlock Row, WideBlock Totals)[times.Length];
+        var splits = new IReadOnlyList<int>[times.Length];
+        for (var i = 0; i < times.Length; i++)
+        {
+            (splits[i], var rest) = steps.Split(times[i]);
+            states[i] = (start, new WideBlock(1, totals.Columns));
+            if (rest > 0)
+            {
+                var step = new ShortStep(steps.Chain, rest);
+                if (totals.Columns > 0)
+                {
+                    states[i].Totals = WideProduct.Of(start, [mass], step.Totals(totals, context.Cancellation), null, false, context.Cancellation);
+                }
+
+                states[i].Row = step.Row(start, mass, context.Cancellation);
+            }
+        }
+
+        var last = splits.Max(s => s.Count == 0 ? -1 : s[^1]);
+        for (var j = 0; j <= last; j++)
+        {
+            var level = steps.At(j, context.Cancellation);
+            context.Progress?.Report(new SolveProgress("squaring", j + 1, last + 1, ""));
+            for (var i = 0; i < times.Length; i++)
+            {
+                if (!splits[i].Contains(j))
+                {
+                    continue;
+                }
+
+                if (totals.Columns > 0)
+                {
+                    var more = WideProduct.Of(states[i].Row, [mass], level.Totals, null, false, context.Cancellation);
+                    TransitionLadder.AddTo(more, states[i].Totals);
+                    states[i].Totals = more;
+                }
+
+                states[i].Row = WideProduct.Of(states[i].Row, [mass], level.Matrix, null, true, context.Cancellation);
+            }
+        }
+
+        return states;
+    }
+
+    /// <summary>Nothing moves: the start is kept and earns all the time.</summary>
+    private (WideBlock Row, WideBlock Totals) Still(double time)
+    {
+        if (chain is null)
+        {
+            return (start, new WideBlock(1, totals.Columns));
+        }
+
+        var earned = WideProduct.Of(start, [mass], totals, null, false, CancellationToken.None);
+        for (var c = 0; c < earned.Columns; c++)
+        {
+            earned.Set(c, earned.Of(c) * time);
+            earned.Bound[c] = ((earned.Bound[c] * time) + (earned.High[c] * DoubleDouble.Epsilon * WideBlock.BoundScale)) * (1 + 1e-15);
+        }
+
+        return (start, earned);
+    }
+
+    private Answer Read(double time, (WideBlock Row, WideBlock Totals) state, SolveContext context)
+    {
+        var (row, earned) = state;
+        var values = row.Columns == 0 ? new WideBlock(1, rates.Columns) : WideProduct.Of(row, [mass], rates, null, false, context.Cancellation);
+        var states = chain?.States ?? [];
+
+        // At time zero no state but those of the start is reached.
+        bool CanBe(int k) => time > 0 || start.High[k] > 0;
+        Estimate Value(WideBlock block, int c, double[] reward) =>
+            Enumerable.Range(0, states.Length).Any(k => CanBe(k) && reward[states[k]] > 0) ? Estimated(block.Rounded(0, c)) : Estimate.Zero;
+        var answer = new Answer(
+            [.. problem.Rates.Select((r, c) => Value(values, c, r))],
+            [.. problem.Totals.Select((r, c) => time == 0 ? Estimate.Zero : Value(earned, c, r))],
+            new double[problem.Start.Length],
+            new double[problem.Start.Length]);
+        for (var k = 0; problem.WantsDistributions && k < states.Length; k++)
+        {
+            (answer.Distribution[states[k]], answer.Bounds[states[k]]) = CanBe(k) ? row.Rounded(0, k) : (0, 0);
+        }
+
+        return answer;
+    }
+
+    private void CheckRange(double time)
+    {
+        foreach (var reward in problem.Rates.Select(r => r.Max()).Concat(problem.Totals.Select(r => r.Max() * Math.Max(1, time))))
+        {
+            if (!(reward <= LargestTotal))
+            {
+                throw new NotConvergedException($"A reward may come to {reward:G3}, beyond {LargestTotal:G1}. Choose another unit for it or for the time.");
+            }
+        }
+    }
+
+    private static Estimate Estimated((double Value, double Bound) rounded) => new(rounded.Value, rounded.Bound, true);
+
+    private sealed record Answer(Estimate[] Rates, Estimate[] Totals, double[] Distribution, double[] Bounds);
+}

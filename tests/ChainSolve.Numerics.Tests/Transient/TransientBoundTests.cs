@@ -1,0 +1,57 @@
+using ChainSolve.Numerics.Iteration;
+using ChainSolve.Numerics.Tests.Properties;
+using ChainSolve.Numerics.Transient;
+using ChainSolve.Tests.Shared.Chains;
+using ChainSolve.Tests.Shared.Reference;
+using Xunit.Abstractions;
+
+namespace ChainSolve.Numerics.Tests.Transient;
+
+/// <summary>True errors against the bounds that come with the values, on random chains and with the slow reference in 256 bits.</summary>
+public class TransientBoundTests(ITestOutputHelper output)
+{
+    [Fact]
+    public void Squaring_RandomChains_ErrorsWithinBoundsOfOneRounding() => Compare(new SquaringSolver(), 250, 1, 8, 1e13, 1.2e-16);
+
+    [Fact]
+    public void Squaring_VeryLongTimes_ErrorsWithinBoundsOfOneRounding() => Compare(new SquaringSolver(), 60, 2, 6, 1e18, 1.2e-16);
+
+    [Fact]
+    [Trait("Category", "Long")]
+    public void Squaring_ThousandsOfRandomChains_ErrorsWithinBoundsOfOneRounding() => Compare(new SquaringSolver(), 4000, 3, 12, 1e15, 1.2e-16);
+
+    private void Compare(ITransientSolver solver, int count, int seed, int largest, double highRateTime, double relative)
+    {
+        var tally = new BoundTally();
+        for (var k = 0; k < count; k++)
+        {
+            var random = new Random((seed * 1_000_003) + k);
+            var chain = new ChainMaker(random).Make(ChainMaker.Shapes[k % ChainMaker.Shapes.Length], random.Next(1, largest + 1), 1e-9, highRateTime);
+            bool[]? alive = random.Next(2) == 0 ? null : [.. Enumerable.Range(0, chain.Count).Select(_ => random.Next(4) > 0)];
+            var problem = chain.Problem(chain.Time) with { Alive = alive };
+            var result = solver.Solve(problem, SolveContext.Default);
+            var truth = chain.Reference.DistributionAndTotals(chain.Start, chain.Time, [chain.Rewards], alive);
+            void Add(string what, double value, double bound, BigFloat expected)
+            {
+                tally.Add($"{solver.Name} {what}", chain, $"{what} of {k}", value, bound, expected);
+                if (expected > 1e-280)
+                {
+                    Assert.True(bound <= value * relative, $"{what} of {k}: {value:R} has a bound of {bound / value:G3}, true {expected}, alive {string.Join(",", alive ?? [])}{chain}");
+                }
+            }
+
+            var mean = BigFloat.Zero;
+            for (var i = 0; i < chain.Count; i++)
+            {
+                Add("probability", result.Distributions![0][i], result.DistributionBounds![0][i], truth[i]);
+                mean += truth[i] * chain.Rewards[i];
+            }
+
+            Add("rate", result.Rates[0][0].Value, result.Rates[0][0].Bound, mean);
+            Add("total", result.Totals[0][0].Value, result.Totals[0][0].Bound, truth[chain.Count]);
+        }
+
+        output.WriteLine(tally.Summary());
+        tally.HoldsEverywhere(3 * count);
+    }
+}
