@@ -1,3 +1,4 @@
+using ChainSolve.Numerics.Iteration;
 using ChainSolve.Numerics.Operators;
 
 namespace ChainSolve.Numerics.Transient;
@@ -5,6 +6,9 @@ namespace ChainSolve.Numerics.Transient;
 /// <summary>Checks what a caller asks.</summary>
 internal static class ProblemCheck
 {
+    // Beyond it products of two doubles have no room.
+    private const double LargestResult = 1e280;
+
     public static void Check(TransientProblem problem)
     {
         ArgumentNullException.ThrowIfNull(problem);
@@ -37,6 +41,18 @@ internal static class ProblemCheck
         if (!double.IsFinite(time) || time < 0)
         {
             throw new ArgumentException($"A time is {time}; times must be finite and not negative.", name);
+        }
+    }
+
+    /// <summary>Throws where a result could come near the end of the range of a double.</summary>
+    public static void Range(TransientProblem problem, double time)
+    {
+        foreach (var largest in problem.Rates.Select(r => r.Max()).Concat(problem.Totals.Select(r => r.Max() * Math.Max(1, time))))
+        {
+            if (!(largest <= LargestResult))
+            {
+                throw new NotConvergedException($"A reward may come to {largest:G3}, beyond {LargestResult:G1}. Choose another unit for it or for the time.");
+            }
         }
     }
 }

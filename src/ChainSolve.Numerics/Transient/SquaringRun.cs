@@ -10,9 +10,6 @@ namespace ChainSolve.Numerics.Transient;
 /// </summary>
 internal sealed class SquaringRun
 {
-    // Totals beyond this leave no room for products of two doubles.
-    private const double LargestTotal = 1e280;
-
     private readonly TransientProblem problem;
     private readonly ReachedChain? chain;
     private readonly TransitionLadder? ladder;
@@ -51,7 +48,7 @@ internal sealed class SquaringRun
         foreach (var time in distinct)
         {
             ProblemCheck.Time(time, nameof(times));
-            CheckRange(time);
+            ProblemCheck.Range(problem, time);
         }
 
         var rows = ladder is null ? [.. distinct.Select(Still)] : Climb(distinct, ladder, context);
@@ -154,17 +151,6 @@ internal sealed class SquaringRun
         }
 
         return answer;
-    }
-
-    private void CheckRange(double time)
-    {
-        foreach (var reward in problem.Rates.Select(r => r.Max()).Concat(problem.Totals.Select(r => r.Max() * Math.Max(1, time))))
-        {
-            if (!(reward <= LargestTotal))
-            {
-                throw new NotConvergedException($"A reward may come to {reward:G3}, beyond {LargestTotal:G1}. Choose another unit for it or for the time.");
-            }
-        }
     }
 
     private static Estimate Estimated((double Value, double Bound) rounded) => new(rounded.Value, rounded.Bound, true);

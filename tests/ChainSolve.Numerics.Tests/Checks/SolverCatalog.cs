@@ -7,7 +7,7 @@ namespace ChainSolve.Numerics.Tests.Checks;
 /// <summary>All solvers under test, by name.</summary>
 internal static class SolverCatalog
 {
-    public static IReadOnlyList<ITransientSolver> Transient { get; } = [];
+    public static IReadOnlyList<ITransientSolver> Transient => TransientSolvers.All;
 
     public static IReadOnlyList<IStationarySolver> Stationary => StationarySolvers.All;
 

@@ -48,7 +48,8 @@ internal static class TransientLaws
         var first = Math.Max(grain, Math.Floor(chain.Time * 0.37 / grain) * grain);
         var second = Math.Floor(chain.Time / grain) * grain;
         var whole = chain.Problem(first + second);
-        foreach (var solver in SolversFor(whole))
+        var everywhere = Enumerable.Repeat(1.0 / chain.Count, chain.Count).ToArray();
+        foreach (var solver in SolversFor(whole with { Start = everywhere }))
         {
             var expected = solver.Solve(whole, SolveContext.Default);
             var half = solver.Solve(chain.Problem(first), SolveContext.Default);

@@ -20,6 +20,14 @@ public class TransientBoundTests(ITestOutputHelper output)
     [Trait("Category", "Long")]
     public void Squaring_ThousandsOfRandomChains_ErrorsWithinBoundsOfOneRounding() => Compare(new SquaringSolver(), 4000, 3, 12, 1e15, 1.2e-16);
 
+    [Fact]
+    public void Uniformization_RandomChains_ErrorsWithinBoundsOfAFewRoundings() => Compare(new UniformizationSolver(), 250, 4, 8, 3e4, 1.1e-15);
+
+    [Fact]
+    [Trait("Category", "Long")]
+    public void Uniformization_ThousandsOfRandomChains_ErrorsWithinBoundsOfAFewRoundings() =>
+        Compare(new UniformizationSolver(), 3000, 5, 12, 1e5, 1.1e-15);
+
     private void Compare(ITransientSolver solver, int count, int seed, int largest, double highRateTime, double relative)
     {
         var tally = new BoundTally();

@@ -1,0 +1,57 @@
+using ChainSolve.Numerics.Iteration;
+
+namespace ChainSolve.Numerics.Transient;
+
+/// <summary>The methods for transient problems, by name, and the choice between them.</summary>
+/// <remarks>Safe to share between threads.</remarks>
+public static class TransientSolvers
+{
+    // Up to about a second the method that is right to one rounding at any time is worth its price.
+    private const double AffordableSquaring = 3e9;
+
+    /// <summary>The methods of this library.</summary>
+    public static IReadOnlyList<ITransientSolver> All { get; } = [new SquaringSolver(), new UniformizationSolver()];
+
+    /// <summary>Chooses a method.</summary>
+    /// <param name="problem">What is asked.</param>
+    /// <param name="name">The name of the method; null to choose by what each would cost.</param>
+    /// <param name="solvers">The methods to choose from; null for <see cref="All"/>.</param>
+    /// <exception cref="ArgumentException">There is no method of that name, or the problem does not fit together.</exception>
+    /// <exception cref="NotConvergedException">No method can do the problem.</exception>
+    public static Choice<ITransientSolver> Select(
+        TransientProblem problem, string? name = null, IReadOnlyList<ITransientSolver>? solvers = null) =>
+        Rank(problem, name, solvers)[0];
+
+    /// <summary>The methods that can do the problem, the best first; only one where a name is given.</summary>
+    internal static IReadOnlyList<Choice<ITransientSolver>> Rank(
+        TransientProblem problem, string? name, IReadOnlyList<ITransientSolver>? solvers)
+    {
+        ProblemCheck.Check(problem);
+        solvers ??= All;
+        if (name is not null)
+        {
+            return [new(SolverNames.Find(solvers, s => s.Name, name, "transient"), "asked for by name")];
+        }
+
+        var costs = solvers.Select(s => (Solver: s, Cost: s.Cost(problem))).Where(c => double.IsFinite(c.Cost)).OrderBy(c => c.Cost).ToList();
+        if (costs.Count == 0)
+        {
+            throw new NotConvergedException(
+                $"None of the methods {string.Join(", ", solvers.Select(s => s.Name))} can do {problem.Generator.StateCount} states to these times.");
+        }
+
+        // Steps in one double are quick but the least accurate: squaring goes before them where it can be paid.
+        var least = costs[0].Solver is UniformizationSolver && costs[0].Cost > UniformizationSolver.AffordableOperations / 5
+            ? costs.FindIndex(c => c.Solver is SquaringSolver && c.Cost <= AffordableSquaring)
+            : 0;
+        var ranked = costs.Select((c, i) => (c.Solver, Rank: i == least ? -1 : i)).OrderBy(c => c.Rank).Select(c => c.Solver);
+        return [.. ranked.Select(s => new Choice<ITransientSolver>(s, Reason(s)))];
+    }
+
+    private static string Reason(ITransientSolver solver) => solver switch
+    {
+        SquaringSolver => "the chain is small: squaring its matrix is right to one rounding at any time",
+        UniformizationSolver => "uniformization takes the least work for this size and these times",
+        _ => "it takes the least work by its own account",
+    };
+}

@@ -1,0 +1,172 @@
+using ChainSolve.Numerics.Arithmetic;
+using ChainSolve.Numerics.Estimates;
+using ChainSolve.Numerics.Iteration;
+using ChainSolve.Numerics.Poisson;
+
+namespace ChainSolve.Numerics.Transient;
+
+/// <summary>One pass over the vectors of a uniformized chain that serves all times of a problem.</summary>
+internal sealed class UniformizationPass
+{
+    private const double Rounding = 1.2e-16;
+    private const long ReportSteps = 256;
+
+    private readonly TransientProblem problem;
+    private readonly bool[] reached;
+    private readonly SolveContext context;
+    private readonly UniformizedStep step;
+    private readonly DoubleDouble mass;
+    private readonly bool isKept;
+
+    public UniformizationPass(TransientProblem problem, bool[] reached, bool isWide, SolveContext context)
+    {
+        this.problem = problem;
+        this.reached = reached;
+        this.context = context;
+
+        // In one double the mass drifts; where none is lost it is known, and what it seems to be tells the drift.
+        isKept = !isWide && !Loses();
+        var rates = isKept ? problem.Rates.Append(Ones()) : problem.Rates;
+        var totals = isKept ? problem.Totals.Append(Ones()) : problem.Totals;
+        (RateCount, TotalCount) = (rates.Count(), totals.Count());
+        step = new UniformizedStep(problem.Generator, problem.Start, reached, [.. rates, .. totals], isWide, context.Threads, context.Cancellation);
+        for (var i = 0; i < reached.Length; i++)
+        {
+            mass += reached[i] ? problem.Start[i] : 0;
+        }
+    }
+
+    private int RateCount { get; }
+
+    private int TotalCount { get; }
+
+    public TransientResult Run()
+    {
+        double[] times = [.. problem.Times.Where(t => t > 0).Distinct().Order()];
+        TimeSums[] sums = [.. times.Select(t => new TimeSums(
+            PoissonWindow.Of(step.Rate * t, PoissonWindow.Deep, context.Cancellation),
+            step, RateCount, TotalCount, problem.WantsDistributions ? reached : null))];
+        var last = sums.Max(s => s.Right);
+        var steps = Walk(sums, last);
+        var lost = Lost(steps);
+        var answers = new Dictionary<double, Answer>();
+        for (var i = 0; i < times.Length; i++)
+        {
+            sums[i].Finish();
+            answers[times[i]] = Read(times[i], sums[i], lost);
+        }
+
+        if (problem.Times.Contains(0))
+        {
+            var still = new SquaringRun(problem, keepsAll: false).At([0], context);
+            answers[0] = new Answer(still.Rates[0], still.Totals[0], still.Distributions?[0], still.DistributionBounds?[0]);
+        }
+
+        return new TransientResult
+        {
+            Rates = [.. problem.Times.Select(t => answers[t].Rates)],
+            Totals = [.. problem.Times.Select(t => answers[t].Totals)],
+            Distributions = problem.WantsDistributions ? [.. problem.Times.Select(t => (double[])answers[t].Distribution!.Clone())] : null,
+            DistributionBounds = problem.WantsDistributions ? [.. problem.Times.Select(t => (double[])answers[t].Bounds!.Clone())] : null,
+            How = $"uniformization in {(step.IsWide ? "two doubles" : "one double")}, q t = {(step.Rate * times[^1]).High:G3}, {steps} steps",
+        };
+    }
+
+    /// <summary>Goes on until no time needs more; the number of steps taken.</summary>
+    private long Walk(TimeSums[] sums, long last)
+    {
+        var first = 0;
+        for (long k = 0; ; k++)
+        {
+            for (var i = first; i < sums.Length; i++)
+            {
+                if (!sums[i].IsDone)
+                {
+                    sums[i].Add(k);
+                }
+            }
+
+            while (first < sums.Length && sums[first].IsDone)
+            {
+                first++;
+            }
+
+            if (first == sums.Length)
+            {
+                return k;
+            }
+
+            if (k % ReportSteps == 0)
+            {
+                context.Progress?.Report(new SolveProgress("uniformization", k, last, ""));
+            }
+
+            step.Advance();
+        }
+    }
+
+    private Answer Read(double time, TimeSums sums, double lost)
+    {
+        // The steps; the weight or tail, the vector as one double, its product with a reward, and the sum over steps; and
+        // what the rounding of the mean does to a weight or a tail, which is at most |k - mean| or k + 1 times it.
+        var relative = ((sums.LastStep * step.StepError) + (6 * Rounding) + ((sums.Width + sums.LastStep + 10) * 24 * DoubleDouble.Unit)) * (1 + 1e-6);
+        var left = (sums.Left + PoissonWindow.Deep + lost) * (1 + 1e-6);
+        var leftOfTotals = ((sums.LeftOfTotals * step.Inverse) + (lost * time) + (PoissonWindow.Deep * (time + (sums.LastStep * step.Inverse)))) * (1 + 1e-6);
+        var (rateScale, totalScale) = (1.0, step.Inverse);
+        if (isKept)
+        {
+            rateScale = mass.High / sums.Rate(RateCount - 1);
+            totalScale = mass.High * time / sums.Total(TotalCount - 1);
+            relative = (2 * relative) + (4 * Rounding);
+        }
+
+        relative += 2 * Rounding;
+        Estimate Bounded(double value, double largest, double absolute) =>
+            largest == 0 ? Estimate.Zero : new Estimate(value, Math.BitIncrement((value * relative) + (largest * absolute)), true);
+        var answer = new Answer(
+            [.. problem.Rates.Select((_, r) => Bounded(sums.Rate(r) * rateScale, step.Largest(r), left))],
+            [.. problem.Totals.Select((_, r) => Bounded(sums.Total(r) * totalScale, step.Largest(RateCount + r), leftOfTotals))],
+            sums.Distribution,
+            problem.WantsDistributions ? new double[reached.Length] : null);
+        for (var i = 0; problem.WantsDistributions && i < reached.Length; i++)
+        {
+            answer.Distribution![i] *= rateScale;
+            answer.Bounds![i] = reached[i] ? Bounded(answer.Distribution[i], 1, left).Bound : 0;
+        }
+
+        return answer;
+    }
+
+    /// <summary>
+    /// The mass that was dropped: elements below <see cref="UniformizedStep.Flushed"/>, and what underflowed above them.
+    /// </summary>
+    private double Lost(long steps) =>
+        (step.DroppedCount * UniformizedStep.Flushed)
+        + (steps * (double)reached.Length * (step.MostInto + 2) * Math.ScaleB(1 + step.Inverse, -1070));
+
+    private bool Loses()
+    {
+        var rows = problem.Generator.Rows;
+        for (var i = 0; i < reached.Length; i++)
+        {
+            for (var e = rows.Offsets[i]; reached[i] && e < rows.Offsets[i + 1]; e++)
+            {
+                if (rows.Values[e] > 0 && !reached[rows.Targets[e]])
+                {
+                    return true;
+                }
+            }
+        }
+
+        return false;
+    }
+
+    private double[] Ones()
+    {
+        var ones = new double[reached.Length];
+        Array.Fill(ones, 1);
+        return ones;
+    }
+
+    private sealed record Answer(Estimate[] Rates, Estimate[] Totals, double[]? Distribution, double[]? Bounds);
+}
