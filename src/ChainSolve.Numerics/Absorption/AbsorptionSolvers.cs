@@ -10,7 +10,7 @@ public static class AbsorptionSolvers
 
     /// <summary>The methods of this library.</summary>
     public static IReadOnlyList<IAbsorptionSolver> All { get; } =
-        [new GthAbsorptionSolver(), new SparseGthAbsorptionSolver()];
+        [new GthAbsorptionSolver(), new SparseGthAbsorptionSolver(), new SweepAbsorptionSolver()];
 
     /// <summary>Chooses a method.</summary>
     /// <param name="problem">What is asked.</param>

@@ -12,7 +12,7 @@ public static class StationarySolvers
 
     /// <summary>The methods of this library.</summary>
     public static IReadOnlyList<IStationarySolver> All { get; } =
-        [new GthSolver(), new SparseGthSolver(), new DetailedBalanceSolver()];
+        [new GthSolver(), new SparseGthSolver(), new DetailedBalanceSolver(), new SweepSolver("gauss-seidel", false), new SweepSolver("sor", true)];
 
     /// <summary>Chooses a method for an irreducible chain.</summary>
     /// <param name="generator">The chain.</param>
