@@ -22,7 +22,7 @@ internal sealed class ConvergenceWatch
     private readonly int batch;
     private readonly double sweepRounding;
     private double relaxation = 1;
-    private double spread = 1;
+    private double spread;
     private double change = double.PositiveInfinity;
     private double bestContraction = double.PositiveInfinity;
     private double bestRelaxation = 1;
@@ -30,13 +30,15 @@ internal sealed class ConvergenceWatch
     private bool isSpent;
     private double lastContraction = 1;
     private double contractionBeforeLast = 1;
+    private double spreadAtSettling;
+    private int stepsAtSettling;
     private int standstill;
     private int steps;
 
     public ConvergenceWatch(StationarySweeps sweeps, Generator generator, bool overRelaxes, int batch)
     {
         (this.sweeps, this.overRelaxes, this.batch) = (sweeps, overRelaxes, batch);
-        spread = sweeps.Spread();
+        spread = spreadAtSettling = sweeps.Spread();
         sweepRounding = Unit * (3 + (generator.TransitionCount / (double)generator.StateCount / 2));
     }
 
@@ -46,12 +48,12 @@ internal sealed class ConvergenceWatch
     /// <summary>The error that is left, relative, for the worst probability.</summary>
     public double Error => Contraction >= 1
         ? double.PositiveInfinity
-        : 4 * (((change * Contraction) + sweepRounding) / (1 - Contraction) + spread);
+        : (overRelaxes ? 64 : 4) * (((change * Contraction) + sweepRounding) / (1 - Contraction) + spread);
 
     public bool IsDone { get; private set; }
 
     /// <summary>The cycles that are still needed at the speed seen last; 0 while it is not known.</summary>
-    public double CyclesToGo => steps < 16 || isSpent || spread <= Rough || (overRelaxes && !isSettled) ? 0
+    public double CyclesToGo => steps < stepsAtSettling + 16 || isSpent || spread <= Rough || (overRelaxes && !isSettled) ? 0
         : Contraction >= 1 ? double.PositiveInfinity
         : Math.Log(spread / Spent) / -Math.Log(Contraction);
 
@@ -82,7 +84,8 @@ internal sealed class ConvergenceWatch
             if (next > Rough || steps == 1)
             {
                 var seen = Math.Pow(Math.Max(next, Spent) / spread, 1.0 / batch);
-                Contraction = steps == 1 ? seen : Math.Max(seen, Math.Max(lastContraction, contractionBeforeLast));
+                var overall = Math.Pow(next / spreadAtSettling, 1.0 / batch / Math.Max(1, steps - stepsAtSettling));
+                Contraction = steps == 1 ? seen : Math.Max(Math.Max(seen, overall), Math.Max(lastContraction, contractionBeforeLast));
                 (contractionBeforeLast, lastContraction) = (steps == 1 ? seen : lastContraction, seen);
             }
 
@@ -109,32 +112,43 @@ internal sealed class ConvergenceWatch
     /// <summary>Raises the relaxation step by step as long as that speeds up, and steps back when it no longer does.</summary>
     private void Relax()
     {
-        if (!overRelaxes || steps % TrialSteps != 0)
+        if (!overRelaxes)
         {
             return;
         }
 
-        if (Contraction > 1 - 1e-6 && relaxation > 1 && isSettled)
+        if (relaxation > 1 && !(lastContraction < 1))
         {
-            // What was best early on does not hold late.
-            relaxation = 1;
-            steps = 0;
+            // The errors grew. What the weights are now is a new beginning, and the adjoint vector begins anew with them.
+            Settle(isSettled ? 1 + ((relaxation - 1) / 2) : bestRelaxation);
+            sweeps.RestartAdjoint();
+            spread = spreadAtSettling = sweeps.Spread();
+            isSpent = false;
+            return;
         }
 
-        if (isSettled)
+        if (isSettled || steps % TrialSteps != 0)
         {
             return;
         }
 
-        if (lastContraction < bestContraction && relaxation < MaxRelaxation)
+        if (lastContraction < bestContraction)
         {
             (bestContraction, bestRelaxation) = (lastContraction, relaxation);
-            relaxation += RelaxationStep;
-            return;
+            if (relaxation < MaxRelaxation)
+            {
+                relaxation += RelaxationStep;
+                return;
+            }
         }
 
-        relaxation = lastContraction < bestContraction ? relaxation : bestRelaxation;
+        Settle(bestRelaxation);
+    }
+
+    private void Settle(double chosen)
+    {
+        relaxation = chosen < 1 + (RelaxationStep / 2) ? 1 : chosen;
         isSettled = true;
-        steps = 0;
+        (spreadAtSettling, stepsAtSettling) = (spread, steps);
     }
 }

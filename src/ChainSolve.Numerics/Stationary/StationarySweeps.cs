@@ -20,11 +20,7 @@ internal sealed class StationarySweeps
         X = TreeGuess.Of(generator);
         Before = new double[X.Length];
         Z = new double[X.Length];
-        for (var i = 0; i < Z.Length; i++)
-        {
-            // A fixed scatter of numbers between 0 and 1: it has a share in every slow direction.
-            Z[i] = (((uint)i * 2654435761u) ^ ((uint)i * 40503u >> 7)) % 65536 / 65536.0;
-        }
+        RestartAdjoint();
     }
 
     /// <summary>The weights.</summary>
@@ -71,6 +67,15 @@ internal sealed class StationarySweeps
             Sweep(rows, Z, relaxation, !alternates, false);
             cancellation.ThrowIfCancellationRequested();
             Sweep(rows, Z, relaxation, true, false);
+        }
+    }
+
+    /// <summary>Fills <see cref="Z"/> with a fixed scatter of numbers between 0 and 1, which has a share in every slow direction.</summary>
+    public void RestartAdjoint()
+    {
+        for (var i = 0; i < Z.Length; i++)
+        {
+            Z[i] = (((uint)i * 2654435761u) ^ ((uint)i * 40503u >> 7)) % 65536 / 65536.0;
         }
     }
 

@@ -6,7 +6,7 @@ namespace ChainSolve.Numerics.Stationary;
 
 /// <summary>Gauss-Seidel sweeps, or with over-relaxation, for chains that are too large to be eliminated.</summary>
 /// <remarks>
-/// The error is judged by three figures, and their sum is taken four times: the last relative change of any probability over
+/// The error is judged by three figures, and their sum is taken four times (sixty-four with over-relaxation, whose errors turn as they shrink): the last relative change of any probability over
 /// one less the contraction, the spread of the adjoint vector after as many cycles, and the rounding of one sweep over
 /// one less the contraction. The contraction is that of the adjoint vector late in the run, when only its slowest
 /// direction is left. The bound is estimated.
@@ -14,7 +14,10 @@ namespace ChainSolve.Numerics.Stationary;
 internal sealed class SweepSolver(string name, bool overRelaxes) : IStationarySolver
 {
     private const int Batch = 8;
-    private const int MaxCycles = 20_000;
+
+    // So many entries are worked through at most, in so many cycles.
+    private const double MaxWork = 5e10;
+    private const double MaxCycles = 50_000;
     private const double Unit = 1.12e-16;
 
     public string Name => name;
@@ -34,12 +37,13 @@ internal sealed class SweepSolver(string name, bool overRelaxes) : IStationarySo
         }
 
         var sweeps = new StationarySweeps(generator);
+        var limit = Math.Clamp(MaxWork / (generator.TransitionCount + generator.StateCount), 2000, MaxCycles);
         var watch = new ConvergenceWatch(sweeps, generator, overRelaxes, Batch);
         while (!watch.IsDone)
         {
             watch.Step(context);
             context.Progress?.Report(new SolveProgress(name, sweeps.Cycles, 0, $"error about {watch.Error:G2}"));
-            if (sweeps.Cycles >= MaxCycles || watch.CyclesToGo > MaxCycles)
+            if (sweeps.Cycles >= limit || watch.CyclesToGo > limit)
             {
                 break;
             }

