@@ -126,14 +126,32 @@ internal sealed class ReachedChain
     /// <summary>From which states each of some columns of rewards can be earned, in the order of the block.</summary>
     public bool[] PathsTo(WideBlock rewards)
     {
-        var pattern = new bool[rewards.High.Length];
+        var sources = new List<int>[Count];
         for (var i = 0; i < Count; i++)
         {
-            for (var j = 0; j < Count; j++)
+            sources[i] = [];
+        }
+
+        for (var i = 0; i < Count; i++)
+        {
+            foreach (var target in Targets[i])
             {
-                for (var c = 0; c < rewards.Columns && Paths[(i * Count) + j]; c++)
+                sources[target].Add(i);
+            }
+        }
+
+        var columns = rewards.Columns;
+        var pattern = Array.ConvertAll(rewards.High, r => r > 0);
+        var open = new Stack<int>(Enumerable.Range(0, pattern.Length).Where(at => pattern[at]));
+        while (open.TryPop(out var at))
+        {
+            foreach (var source in sources[at / columns])
+            {
+                var next = (source * columns) + (at % columns);
+                if (!pattern[next])
                 {
-                    pattern[(i * rewards.Columns) + c] |= rewards.High[(j * rewards.Columns) + c] > 0;
+                    pattern[next] = true;
+                    open.Push(next);
                 }
             }
         }

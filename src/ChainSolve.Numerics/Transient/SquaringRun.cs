@@ -10,6 +10,9 @@ namespace ChainSolve.Numerics.Transient;
 /// </summary>
 internal sealed class SquaringRun
 {
+    /// <summary>The largest number of states reached; a matrix of so many takes more than half a gigabyte.</summary>
+    public const int MaxStates = 5000;
+
     private readonly TransientProblem problem;
     private readonly ReachedChain? chain;
     private readonly TransitionLadder? ladder;
@@ -26,6 +29,11 @@ internal sealed class SquaringRun
         ProblemCheck.Check(problem);
         this.problem = problem;
         var reached = ReachedChain.Reach(problem.Generator, problem.Start, problem.Alive);
+        if (reached.Count(r => r) is var count and > MaxStates)
+        {
+            throw new NotConvergedException($"Squaring would need matrices of {count} states; it is meant for up to {MaxStates}. Choose another method.");
+        }
+
         chain = reached.Contains(true) ? ReachedChain.Of(problem.Generator, reached) : null;
         int[] states = chain?.States ?? [];
         start = new WideBlock(1, chain?.Count ?? 0);

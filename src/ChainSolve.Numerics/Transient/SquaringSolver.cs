@@ -23,6 +23,11 @@ public sealed class SquaringSolver : ITransientSolver
     {
         ArgumentNullException.ThrowIfNull(problem);
         var size = ProblemSize.Of(problem);
+        if (size.States > SquaringRun.MaxStates)
+        {
+            return double.PositiveInfinity;
+        }
+
         var (states, longest) = (size.States + 1.0, problem.Times.DefaultIfEmpty(0).Max());
         var levels = Math.Max(0, Math.Log2(size.LargestExit) + Math.Log2(longest) + 5);
         var columns = 1.0 + problem.Totals.Count;
