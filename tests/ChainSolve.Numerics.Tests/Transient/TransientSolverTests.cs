@@ -203,14 +203,13 @@ public class TransientSolverTests
         double[] reward = [.. Enumerable.Range(0, chain.StateCount).Select(i => (double)(i % 7))];
         foreach (var wide in new[] { false, true })
         {
-            var problem = new TransientProblem { Generator = chain, Start = start, Times = [0.3], Rates = [reward], Totals = [reward], WantsDistributions = true };
+            var problem = new TransientProblem { Generator = chain, Start = start, Times = [0.02], Rates = [reward, start], Totals = [reward] };
             var reached = ReachedChain.Reach(chain, start, null);
             var one = new UniformizationPass(problem, reached, wide, SolveContext.Default).Run();
             var two = new UniformizationPass(problem, reached, wide, new SolveContext { Threads = 2 }).Run();
 
             Assert.Equal(one.Rates[0], two.Rates[0]);
             Assert.Equal(one.Totals[0], two.Totals[0]);
-            Assert.Equal(one.Distributions![0], two.Distributions![0]);
         }
     }
 
