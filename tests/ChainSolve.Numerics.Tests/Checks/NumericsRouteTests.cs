@@ -1,4 +1,5 @@
 using ChainSolve.Numerics.Absorption;
+using ChainSolve.Numerics.Iteration;
 using ChainSolve.Numerics.Operators;
 using ChainSolve.Numerics.Stationary;
 using ChainSolve.Numerics.Transient;
@@ -10,10 +11,20 @@ namespace ChainSolve.Numerics.Tests.Checks;
 /// <summary>Every value from outside through the solvers, by each method that can take it.</summary>
 public class NumericsRouteTests
 {
+    /// <summary>Stands for the method that the library chooses.</summary>
+    private const string Chosen = "chosen";
+
+    private static readonly string[] TransientAsks = ["total", "average", "density"];
+
     private static readonly string[] AbsorptionAsks = ["mean-time", "moment", "total-until", "ends-in", "conditional-mean-time"];
 
     // Sweeps gain less than a part in a hundred on these: they give up, or rounding grows beyond the twelfth digit.
     private static readonly string[] SlowForSweeps = ["courtois", "erlC-5-4", "erlC-10-8", "me21-L", "mm1k-100k"];
+
+    public static TheoryData<string, string> TransientCases =>
+        Pairs(
+            c => c.Ask.At is not null || TransientAsks.Contains(c.Ask.What),
+            check => SolverCatalog.Transient.Where(s => s.Cost(TransientProblem(check)) < 1e10).Select(s => s.Name).Append(Chosen));
 
     public static TheoryData<string, string> StationaryCases =>
         Pairs(
@@ -22,13 +33,41 @@ public class NumericsRouteTests
                 .Where(s => s.Name is not ("gauss-seidel" or "sor") || !SlowForSweeps.Any(slow => check.Id.StartsWith(slow, StringComparison.Ordinal)))
                 .Select(s => s.Name));
 
+    public static TheoryData<string, string> SlowCases =>
+        Pairs(c => IsStationary(c) && SlowForSweeps.Any(slow => c.Id.StartsWith(slow, StringComparison.Ordinal)), _ => ["gauss-seidel", "sor"]);
+
     public static TheoryData<string, string> AbsorptionCases =>
         Pairs(c => AbsorptionAsks.Contains(c.Ask.What), _ => SolverCatalog.Absorption.Select(s => s.Name));
+
+    [Theory]
+    [MemberData(nameof(TransientCases))]
+    public void Transient_ACase_HasItsDigits(string id, string method) =>
+        Holds(
+            id,
+            SolverCatalog.Stationary[0],
+            SolverCatalog.Absorption[0],
+            SolverCatalog.Transient.FirstOrDefault(s => s.Name == method) ?? TransientSolvers.Select(TransientProblem(CheckFiles.Find(id))).Solver);
 
     [Theory]
     [MemberData(nameof(StationaryCases))]
     public void Stationary_ACase_HasItsDigits(string id, string method) =>
         Holds(id, SolverCatalog.Stationary.First(s => s.Name == method), SolverCatalog.Absorption[0]);
+
+    [Theory]
+    [MemberData(nameof(SlowCases))]
+    public void Sweeps_ACaseTooSlowForThem_GiveUpOrKnowTheirError(string id, string method)
+    {
+        var check = CheckFiles.Find(id);
+        var solver = SolverCatalog.Stationary.First(s => s.Name == method);
+        try
+        {
+            CheckVerdict.IsWithinItsBound(check, new NumericsAnswers(solver, SolverCatalog.Absorption[0]).Answer(check)!.Value);
+        }
+        catch (NotConvergedException refusal)
+        {
+            Assert.NotEmpty(refusal.Message);
+        }
+    }
 
     [Theory]
     [MemberData(nameof(AbsorptionCases))]
@@ -46,6 +85,13 @@ public class NumericsRouteTests
         var chain = ConcreteChain.From(check.Chain!);
         return chain.Count > 25 || new ReferenceChain(chain.Count, chain.Moves).Reachable().Cast<bool>().All(r => r);
     }
+
+    private static TransientProblem TransientProblem(CheckCase check) => new()
+    {
+        Generator = Generator(check),
+        Start = ConcreteChain.From(check.Chain!).Start,
+        Times = [check.Ask.At ?? check.Ask.Over!.Value],
+    };
 
     private static TheoryData<string, string> Pairs(Func<CheckCase, bool> belongs, Func<CheckCase, IEnumerable<string>> methods)
     {

@@ -2,6 +2,8 @@ using ChainSolve.Numerics.Iteration;
 using ChainSolve.Numerics.Tests.Properties;
 using ChainSolve.Tests.Shared.Chains;
 using MathNet.Numerics.LinearAlgebra;
+using MathNet.Numerics.OdeSolvers;
+using Complex = System.Numerics.Complex;
 
 namespace ChainSolve.Numerics.Tests.Checks;
 
@@ -30,6 +32,37 @@ public class OutsideLibraryTests
         }
     }
 
+    [Theory]
+    [MemberData(nameof(Seeds))]
+    public void Transient_MildChain_IsThatOfTheEigenvalues(int seed)
+    {
+        // p(t) = p0 V e^(Λt) V⁻¹; a badly conditioned V is left to the other checks.
+        var chain = Mild(seed);
+        var values = Matrix(chain).ToComplex().Evd();
+        var vectors = values.EigenVectors;
+        var decay = CreateMatrix.DenseOfDiagonalVector((values.EigenValues * (Complex)chain.Time).PointwiseExp());
+        var condition = vectors.ConditionNumber().Magnitude;
+        if (condition > 1e3)
+        {
+            return;
+        }
+
+        var expected = (CreateVector.Dense(chain.Start).ToComplex() * (vectors * decay * vectors.Inverse())).Real();
+
+        SameDistribution(chain, expected, 1e-11);
+    }
+
+    [Theory]
+    [MemberData(nameof(Seeds))]
+    public void Transient_MildChain_IsThatOfRungeKutta(int seed)
+    {
+        var chain = Mild(seed);
+        var matrix = Matrix(chain);
+        var steps = RungeKutta.FourthOrder(CreateVector.Dense(chain.Start), 0, chain.Time, 4001, (_, p) => p * matrix);
+
+        SameDistribution(chain, steps[^1], 1e-9);
+    }
+
     /// <summary>A dense irreducible chain with rates within a few powers of ten, and a few jumps in its time.</summary>
     private static RandomChain Mild(int seed)
     {
@@ -56,5 +89,15 @@ public class OutsideLibraryTests
         }
 
         return matrix;
+    }
+
+    private static void SameDistribution(RandomChain chain, Vector<double> expected, double tolerance)
+    {
+        var problem = chain.Problem(chain.Time);
+        foreach (var solver in TransientLaws.SolversFor(problem))
+        {
+            var result = solver.Solve(problem, SolveContext.Default).Distributions![0];
+            Assert.All(Enumerable.Range(0, chain.Count), i => Assert.Equal(expected[i], result[i], tolerance));
+        }
     }
 }

@@ -55,7 +55,7 @@ internal sealed class BoundTally
 
         lists.Widths.Add(bound / truth.Abs.ToDouble());
         lists.Errors.Add((error / truth.Abs).ToDouble());
-        if (!error.IsZero)
+        if (error > Negligible)
         {
             lists.Ratios.Add((bound / error).ToDouble());
         }

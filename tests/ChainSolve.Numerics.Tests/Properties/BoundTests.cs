@@ -16,6 +16,15 @@ public class BoundTests(ITestOutputHelper output)
 
     private static readonly (int Least, int Most) Small = (1, 12);
 
+    private static readonly (int Least, int Most) Larger = (13, 30);
+
+    [Fact]
+    public void Transient_LargerRandomChains_ErrorsWithinBounds() => Transient(Usual / 15, seed: 7, Larger, 1e4);
+
+    [Fact]
+    [Trait("Category", "Long")]
+    public void Transient_HundredsOfLargerRandomChains_ErrorsWithinBounds() => Transient(Many / 20, seed: 8, Larger, 1e13);
+
     [Fact]
     public void Stationary_RandomChains_ErrorsWithinBounds() => Stationary(2 * Usual, seed: 3);
 
@@ -38,6 +47,34 @@ public class BoundTests(ITestOutputHelper output)
             var random = new Random((seed * 1_000_003) + k);
             yield return (new ChainMaker(random).Make(shapes[k % shapes.Length], random.Next(sizes.Least, sizes.Most + 1), 1e-9, highRateTime), random);
         }
+    }
+
+    private void Transient(int count, int seed, (int Least, int Most) sizes, double highRateTime)
+    {
+        var tally = new BoundTally();
+        foreach (var (chain, random) in Chains(count, seed, ChainMaker.Shapes, sizes, highRateTime))
+        {
+            var alive = random.Next(2) == 0 ? null : Enumerable.Range(0, chain.Count).Select(_ => random.Next(4) > 0).ToArray();
+            var problem = chain.Problem(chain.Time) with { Alive = alive };
+            BigFloat[]? truth = null;
+            foreach (var solver in SolverCatalog.Transient.Where(s => s.Cost(problem) < 3e7))
+            {
+                truth ??= chain.Reference.DistributionAndTotals(chain.Start, chain.Time, [chain.Rewards], alive);
+                var result = solver.Solve(problem, SolveContext.Default);
+                var rate = BigFloat.Zero;
+                for (var i = 0; i < chain.Count; i++)
+                {
+                    tally.Add($"{solver.Name} distribution", chain, $"p[{i}]", result.Distributions![0][i], result.DistributionBounds![0][i], truth[i]);
+                    rate += truth[i] * chain.Rewards[i];
+                }
+
+                tally.Add($"{solver.Name} rate", chain, "rate", result.Rates[0][0].Value, result.Rates[0][0].Bound, rate);
+                tally.Add($"{solver.Name} total", chain, "total", result.Totals[0][0].Value, result.Totals[0][0].Bound, truth[chain.Count]);
+            }
+        }
+
+        output.WriteLine(tally.Summary());
+        tally.HoldsEverywhere(8 * count);
     }
 
     private void Stationary(int count, int seed)

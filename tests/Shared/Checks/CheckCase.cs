@@ -27,6 +27,9 @@ internal sealed record CheckCase
     /// <summary>The relative error that is allowed.</summary>
     public required double Tolerance { get; init; }
 
+    /// <summary>How far the rounding of the numbers of the chain to doubles can move the answer, relative.</summary>
+    public double Rounding { get; init; } = 1.1e-15;
+
     /// <summary>What the source prints; null where it was computed from a formula.</summary>
     public string? Published { get; init; }
 }
