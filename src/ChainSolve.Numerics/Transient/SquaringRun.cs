@@ -10,8 +10,8 @@ namespace ChainSolve.Numerics.Transient;
 /// </summary>
 internal sealed class SquaringRun
 {
-    /// <summary>The largest number of states reached; a matrix of so many takes more than half a gigabyte.</summary>
-    public const int MaxStates = 5000;
+    /// <summary>The largest number of states reached; a matrix of so many takes some hundred megabytes.</summary>
+    public const int MaxStates = 3000;
 
     private readonly TransientProblem problem;
     private readonly ReachedChain? chain;

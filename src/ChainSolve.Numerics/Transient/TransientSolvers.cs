@@ -6,8 +6,10 @@ namespace ChainSolve.Numerics.Transient;
 /// <remarks>Safe to share between threads.</remarks>
 public static class TransientSolvers
 {
-    // Up to about a second the method that is right to one rounding at any time is worth its price.
-    private const double AffordableSquaring = 3e9;
+    // Within some milliseconds the method that is right to one rounding is taken whatever another would take, and within
+    // about a second before one that would lose more than a few.
+    private const double CheapSquaring = 2e7;
+    private const double AffordableSquaring = 8e9;
 
     /// <summary>The methods of this library.</summary>
     public static IReadOnlyList<ITransientSolver> All { get; } = [new SquaringSolver(), new UniformizationSolver()];
@@ -40,11 +42,9 @@ public static class TransientSolvers
                 $"None of the methods {string.Join(", ", solvers.Select(s => s.Name))} can do {problem.Generator.StateCount} states to these times.");
         }
 
-        // Steps in one double are quick but the least accurate: squaring goes before them where it can be paid.
-        var least = costs[0].Solver is UniformizationSolver && costs[0].Cost > UniformizationSolver.AffordableOperations / 5
-            ? costs.FindIndex(c => c.Solver is SquaringSolver && c.Cost <= AffordableSquaring)
-            : 0;
-        var ranked = costs.Select((c, i) => (c.Solver, Rank: i == least ? -1 : i)).OrderBy(c => c.Rank).Select(c => c.Solver);
+        var enough = costs[0].Solver is UniformizationSolver && !UniformizationSolver.IsWide(problem) ? AffordableSquaring : CheapSquaring;
+        var first = costs[0].Solver is UniformizationSolver ? costs.FindIndex(c => c.Solver is SquaringSolver && c.Cost <= enough) : 0;
+        var ranked = costs.Select((c, i) => (c.Solver, Rank: i == first ? -1 : i)).OrderBy(c => c.Rank).Select(c => c.Solver);
         return [.. ranked.Select(s => new Choice<ITransientSolver>(s, Reason(s)))];
     }
 

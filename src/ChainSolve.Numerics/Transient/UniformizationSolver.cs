@@ -14,12 +14,13 @@ namespace ChainSolve.Numerics.Transient;
 /// </remarks>
 public sealed class UniformizationSolver : ITransientSolver
 {
-    // Operations for one entry of the generator in one step, with vectors of one double and of two.
-    private const double PlainOperations = 2;
-    private const double WideOperations = 10;
+    // What one entry of the generator takes in one step, with vectors of one double and of two, in operations of the kind
+    // that runs from registers: the entries wait for memory.
+    private const double PlainOperations = 6;
+    private const double WideOperations = 30;
 
-    // Up to about a second in two doubles they are always taken.
-    internal const double AffordableOperations = 3e9;
+    // Up to about a second vectors are always of two doubles.
+    private const double AffordableOperations = 8e9;
 
     private const double Rounding = 1.2e-16;
 
@@ -37,10 +38,10 @@ public sealed class UniformizationSolver : ITransientSolver
             return double.PositiveInfinity;
         }
 
-        var entries = size.Transitions + (3.0 * problem.Generator.StateCount);
-        var gathered = Operations(problem) + (problem.WantsDistributions ? 0 : problem.Times.Count * (problem.Rates.Count + problem.Totals.Count) * 10.0);
-        var wide = StepCount(mean) * entries * WideOperations;
-        return (wide <= AffordableOperations ? wide : StepCount(mean) * entries * PlainOperations) + gathered;
+        var isWide = IsWide(problem, size, mean, SolveContext.Default.Tolerance);
+        var rewards = problem.Times.Count * (problem.Rates.Count + problem.Totals.Count) * 10.0;
+        var vectors = problem.WantsDistributions ? 10.0 * problem.Generator.StateCount * problem.Times.Count : 0;
+        return (StepCount(mean) * ((Entries(problem, size) * (isWide ? WideOperations : PlainOperations)) + rewards)) + ((StepCount(mean) - mean) * vectors);
     }
 
     /// <inheritdoc/>
@@ -64,23 +65,24 @@ public sealed class UniformizationSolver : ITransientSolver
                 $"Uniformization would take {mean:G3} steps; it is meant for up to {PoissonWindow.LargestMean:G1}. Choose another method.");
         }
 
-        var entries = size.Transitions + (3.0 * problem.Generator.StateCount);
-        var isWide = StepCount(mean) * entries * WideOperations <= AffordableOperations;
-        if (!isWide)
-        {
-            // One double loses a rounding or so an entry and a step.
-            var most = (problem.Generator.TransitionCount / Math.Max(1.0, size.States)) + 5;
-            isWide = StepCount(mean) * most * Rounding * 4 > context.Tolerance;
-        }
-
-        return new UniformizationPass(problem, reached, isWide, context).Run();
+        return new UniformizationPass(problem, reached, IsWide(problem, size, mean, context.Tolerance), context).Run();
     }
+
+    /// <summary>Whether vectors of two doubles would be taken: where they take little, and where one would be too rough.</summary>
+    internal static bool IsWide(TransientProblem problem) =>
+        ProblemSize.Of(problem) is var size && IsWide(problem, size, LongestMean(size, problem.Times), SolveContext.Default.Tolerance);
+
+    private static bool IsWide(TransientProblem problem, ProblemSize size, double mean, double tolerance)
+    {
+        // One double loses a rounding or so an entry and a step.
+        var loss = StepCount(mean) * ((size.Transitions / Math.Max(1.0, size.States)) + 5) * Rounding;
+        return StepCount(mean) * Entries(problem, size) * WideOperations <= AffordableOperations || loss * 4 > tolerance;
+    }
+
+    private static double Entries(TransientProblem problem, ProblemSize size) => size.Transitions + (3.0 * problem.Generator.StateCount);
 
     private static double LongestMean(ProblemSize size, IReadOnlyList<double> times) =>
         UniformizedStep.Margin * size.LargestExit * times.DefaultIfEmpty(0).Max();
 
     private static double StepCount(double mean) => mean + (9 * Math.Sqrt(mean)) + 30;
-
-    private static double Operations(TransientProblem problem) =>
-        problem.WantsDistributions ? 10.0 * problem.Generator.StateCount * problem.Times.Count * 30 : 0;
 }
