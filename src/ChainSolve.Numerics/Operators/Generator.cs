@@ -1,3 +1,5 @@
+using ChainSolve.Numerics.Arithmetic;
+
 namespace ChainSolve.Numerics.Operators;
 
 /// <summary>
@@ -91,6 +93,32 @@ public sealed class Generator
     {
         CheckState(state, nameof(state));
         return ExitRates[state];
+    }
+
+    /// <summary>How fast a set of states is entered from each state outside of it.</summary>
+    /// <param name="states">True for the states of the set; one entry a state.</param>
+    /// <returns>A new array: the sum of the rates into the set, right to one rounding; 0 for the states of the set themselves.</returns>
+    /// <remarks>Costs one pass over the transitions.</remarks>
+    /// <exception cref="ArgumentException">The set has another length than the chain.</exception>
+    public double[] RatesInto(bool[] states)
+    {
+        StartCheck.Length(this, states, nameof(states));
+        var result = new double[StateCount];
+        for (var i = 0; i < result.Length; i++)
+        {
+            LongSum sum = default;
+            for (var e = Rows.Offsets[i]; !states[i] && e < Rows.Offsets[i + 1]; e++)
+            {
+                if (states[Rows.Targets[e]])
+                {
+                    sum.Add(Rows.Values[e]);
+                }
+            }
+
+            result[i] = sum.Value;
+        }
+
+        return result;
     }
 
     /// <summary>The transitions out of a state, by ascending target.</summary>

@@ -24,6 +24,19 @@ public static class TransientSolvers
         TransientProblem problem, string? name = null, IReadOnlyList<ITransientSolver>? solvers = null) =>
         Rank(problem, name, solvers)[0];
 
+    /// <summary>Chooses a method and solves the problem with it; where it fails, with the next best.</summary>
+    /// <param name="problem">What is asked.</param>
+    /// <param name="name">The name of the method; null to choose by what each would cost.</param>
+    /// <param name="solvers">The methods to choose from; null for <see cref="All"/>.</param>
+    /// <param name="context">Cancellation, progress and accuracy; null for the default.</param>
+    /// <returns>The values, the method that gave them, and why it was taken.</returns>
+    /// <exception cref="ArgumentException">There is no method of that name, or the problem does not fit together.</exception>
+    /// <exception cref="NotConvergedException">No method gave a value.</exception>
+    /// <exception cref="OperationCanceledException">The context's token was cancelled.</exception>
+    public static (TransientResult Result, Choice<ITransientSolver> Choice) Solve(
+        TransientProblem problem, string? name = null, IReadOnlyList<ITransientSolver>? solvers = null, SolveContext? context = null) =>
+        Attempts.First(Rank(problem, name, solvers), s => s.Solve(problem, context ?? SolveContext.Default), s => s.Name);
+
     /// <summary>The methods that can do the problem, the best first; only one where a name is given.</summary>
     internal static IReadOnlyList<Choice<ITransientSolver>> Rank(
         TransientProblem problem, string? name, IReadOnlyList<ITransientSolver>? solvers)
