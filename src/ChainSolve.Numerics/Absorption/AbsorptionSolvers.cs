@@ -6,7 +6,7 @@ namespace ChainSolve.Numerics.Absorption;
 /// <remarks>Safe to share between threads.</remarks>
 public static class AbsorptionSolvers
 {
-    private const double AffordableElimination = 2e10;
+    private const double AffordableElimination = 6e10;
 
     /// <summary>The methods of this library.</summary>
     public static IReadOnlyList<IAbsorptionSolver> All { get; } =

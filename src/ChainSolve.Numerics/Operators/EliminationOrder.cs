@@ -6,6 +6,9 @@ internal sealed class EliminationOrder
     /// <summary>The largest number of entries on one side of the diagonal that an elimination may have.</summary>
     public const long MaxFill = 15_000_000;
 
+    private const int LargeCount = 400_000;
+    private const int FillPerLargeState = 6;
+
     private EliminationOrder(int[]? order, long fill, double updates)
     {
         Order = order;
@@ -24,9 +27,11 @@ internal sealed class EliminationOrder
 
     public static EliminationOrder Find(SharedPattern pattern, SparseRows rows)
     {
+        // Very large chains are worth it only where they hardly fill in, and that shows before much time is spent.
+        var limit = rows.Count > LargeCount ? Math.Min(MaxFill, FillPerLargeState * (long)rows.Count) : MaxFill;
         var (offsets, sources) = pattern.Transposed;
         var search = new MinimumDegree(Neighbours(rows, offsets, sources));
-        return search.Run(MaxFill) is { } order
+        return search.Run(limit) is { } order
             ? new EliminationOrder(order, search.Fill, search.Updates)
             : new EliminationOrder(null, search.Fill, double.PositiveInfinity);
     }

@@ -8,7 +8,7 @@ namespace ChainSolve.Numerics.Stationary;
 public static class StationarySolvers
 {
     // Within this many operations an elimination, whose bound is proved, is preferred to anything faster.
-    private const double AffordableElimination = 2e10;
+    private const double AffordableElimination = 6e10;
 
     /// <summary>The methods of this library.</summary>
     public static IReadOnlyList<IStationarySolver> All { get; } =
