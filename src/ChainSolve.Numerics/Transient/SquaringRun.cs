@@ -14,7 +14,6 @@ internal sealed class SquaringRun
     public const int MaxStates = 3000;
 
     private readonly TransientProblem problem;
-    private readonly ReachedChain? chain;
     private readonly TransitionLadder? ladder;
     private readonly WideBlock start;
     private readonly DoubleDouble mass;
@@ -29,12 +28,13 @@ internal sealed class SquaringRun
         ProblemCheck.Check(problem);
         this.problem = problem;
         var reached = ReachedChain.Reach(problem.Generator, problem.Start, problem.Alive);
-        if (reached.Count(r => r) is var count and > MaxStates)
+        var count = reached.Count(r => r);
+        if (count > MaxStates)
         {
             throw new NotConvergedException($"Squaring would need matrices of {count} states; it is meant for up to {MaxStates}. Choose another method.");
         }
 
-        chain = reached.Contains(true) ? ReachedChain.Of(problem.Generator, reached) : null;
+        var chain = count == 0 ? null : ReachedChain.Of(problem.Generator, reached);
         int[] states = chain?.States ?? [];
         start = new WideBlock(1, chain?.Count ?? 0);
         for (var k = 0; k < states.Length; k++)
@@ -59,18 +59,22 @@ internal sealed class SquaringRun
             ProblemCheck.Range(problem, time);
         }
 
-        var rows = ladder is null ? [.. distinct.Select(Still)] : Climb(distinct, ladder, context);
-        var answers = distinct.Zip(rows).ToDictionary(p => p.First, p => Read(p.First, p.Second, context));
-        return new TransientResult
+        var answers = new Dictionary<double, TimeAnswer>();
+        if (ladder is null || distinct.All(t => t == 0))
         {
-            Rates = [.. times.Select(t => answers[t].Rates)],
-            Totals = [.. times.Select(t => answers[t].Totals)],
-            Distributions = problem.WantsDistributions ? [.. times.Select(t => (double[])answers[t].Distribution.Clone())] : null,
-            DistributionBounds = problem.WantsDistributions ? [.. times.Select(t => (double[])answers[t].Bounds.Clone())] : null,
-            How = ladder is null
-                ? "nothing moves"
-                : $"squaring in two doubles, {start.Columns} states, {ladder.LevelCount} levels from a step of 2^{ladder.StepPower}",
-        };
+            Array.ForEach(distinct, t => answers[t] = TimeAnswer.Still(problem, t));
+            return TimeAnswer.Gather(times, answers, problem.WantsDistributions, "nothing moves");
+        }
+
+        var rows = Climb(distinct, ladder, context);
+        for (var i = 0; i < distinct.Length; i++)
+        {
+            answers[distinct[i]] = distinct[i] == 0 ? TimeAnswer.Still(problem, 0) : Read(ladder.Chain, rows[i], context);
+        }
+
+        return TimeAnswer.Gather(
+            times, answers, problem.WantsDistributions,
+            $"squaring in two doubles, {start.Columns} states, {ladder.LevelCount} levels from a step of 2^{ladder.StepPower}");
     }
 
     /// <summary>The distributions and totals at ascending times. Levels are met once, ascending, so that none need be kept.</summary>
@@ -120,48 +124,24 @@ internal sealed class SquaringRun
         return states;
     }
 
-    /// <summary>Nothing moves: the start is kept and earns all the time.</summary>
-    private (WideBlock Row, WideBlock Totals) Still(double time)
-    {
-        if (chain is null)
-        {
-            return (start, new WideBlock(1, totals.Columns));
-        }
-
-        var earned = WideProduct.Of(start, [mass], totals, null, false, CancellationToken.None);
-        for (var c = 0; c < earned.Columns; c++)
-        {
-            earned.Set(c, earned.Of(c) * time);
-            earned.Bound[c] = ((earned.Bound[c] * time) + (earned.High[c] * DoubleDouble.Epsilon * WideBlock.BoundScale)) * (1 + 1e-15);
-        }
-
-        return (start, earned);
-    }
-
-    private Answer Read(double time, (WideBlock Row, WideBlock Totals) state, SolveContext context)
+    private TimeAnswer Read(ReachedChain chain, (WideBlock Row, WideBlock Totals) state, SolveContext context)
     {
         var (row, earned) = state;
-        var values = row.Columns == 0 ? new WideBlock(1, rates.Columns) : WideProduct.Of(row, [mass], rates, null, false, context.Cancellation);
-        var states = chain?.States ?? [];
-
-        // At time zero no state but those of the start is reached.
-        bool CanBe(int k) => time > 0 || start.High[k] > 0;
+        var values = WideProduct.Of(row, [mass], rates, null, false, context.Cancellation);
         Estimate Value(WideBlock block, int c, double[] reward) =>
-            Enumerable.Range(0, states.Length).Any(k => CanBe(k) && reward[states[k]] > 0) ? Estimated(block.Rounded(0, c)) : Estimate.Zero;
-        var answer = new Answer(
+            Array.Exists(chain.States, i => reward[i] > 0) ? Estimated(block.Rounded(0, c)) : Estimate.Zero;
+        var answer = new TimeAnswer(
             [.. problem.Rates.Select((r, c) => Value(values, c, r))],
-            [.. problem.Totals.Select((r, c) => time == 0 ? Estimate.Zero : Value(earned, c, r))],
-            new double[problem.Start.Length],
-            new double[problem.Start.Length]);
-        for (var k = 0; problem.WantsDistributions && k < states.Length; k++)
+            [.. problem.Totals.Select((r, c) => Value(earned, c, r))],
+            problem.WantsDistributions ? new double[problem.Start.Length] : null,
+            problem.WantsDistributions ? new double[problem.Start.Length] : null);
+        for (var k = 0; problem.WantsDistributions && k < chain.States.Length; k++)
         {
-            (answer.Distribution[states[k]], answer.Bounds[states[k]]) = CanBe(k) ? row.Rounded(0, k) : (0, 0);
+            (answer.Distribution![chain.States[k]], answer.Bounds![chain.States[k]]) = row.Rounded(0, k);
         }
 
         return answer;
     }
 
     private static Estimate Estimated((double Value, double Bound) rounded) => new(rounded.Value, rounded.Bound, true);
-
-    private sealed record Answer(Estimate[] Rates, Estimate[] Totals, double[] Distribution, double[] Bounds);
 }

@@ -22,8 +22,8 @@ public sealed class SquaringSolver : ITransientSolver
     public double Cost(TransientProblem problem)
     {
         ArgumentNullException.ThrowIfNull(problem);
-        var size = ProblemSize.Of(problem);
-        if (size.States > SquaringRun.MaxStates)
+        var size = ProblemSize.Estimate(problem);
+        if (size.States >= SquaringRun.MaxStates)
         {
             return double.PositiveInfinity;
         }

@@ -49,7 +49,7 @@ internal sealed class UniformizationPass
         var last = sums.Max(s => s.Right);
         var steps = Walk(sums, last);
         var lost = Lost(steps);
-        var answers = new Dictionary<double, Answer>();
+        var answers = new Dictionary<double, TimeAnswer>();
         for (var i = 0; i < times.Length; i++)
         {
             sums[i].Finish();
@@ -58,18 +58,12 @@ internal sealed class UniformizationPass
 
         if (problem.Times.Contains(0))
         {
-            var still = new SquaringRun(problem, keepsAll: false).At([0], context);
-            answers[0] = new Answer(still.Rates[0], still.Totals[0], still.Distributions?[0], still.DistributionBounds?[0]);
+            answers[0] = TimeAnswer.Still(problem, 0);
         }
 
-        return new TransientResult
-        {
-            Rates = [.. problem.Times.Select(t => answers[t].Rates)],
-            Totals = [.. problem.Times.Select(t => answers[t].Totals)],
-            Distributions = problem.WantsDistributions ? [.. problem.Times.Select(t => (double[])answers[t].Distribution!.Clone())] : null,
-            DistributionBounds = problem.WantsDistributions ? [.. problem.Times.Select(t => (double[])answers[t].Bounds!.Clone())] : null,
-            How = $"uniformization in {(step.IsWide ? "two doubles" : "one double")}, q t = {(step.Rate * times[^1]).High:G3}, {steps} steps",
-        };
+        return TimeAnswer.Gather(
+            problem.Times, answers, problem.WantsDistributions,
+            $"uniformization in {(step.IsWide ? "two doubles" : "one double")}, q t = {(step.Rate * times[^1]).High:G3}, {steps} steps");
     }
 
     /// <summary>Goes on until no time needs more; the number of steps taken.</summary>
@@ -105,7 +99,7 @@ internal sealed class UniformizationPass
         }
     }
 
-    private Answer Read(double time, TimeSums sums, double lost)
+    private TimeAnswer Read(double time, TimeSums sums, double lost)
     {
         // The steps; the weight or tail, the vector as one double, its product with a reward, and the sum over steps; and
         // what the rounding of the mean does to a weight or a tail, which is at most |k - mean| or k + 1 times it.
@@ -123,7 +117,7 @@ internal sealed class UniformizationPass
         relative += 2 * Rounding;
         Estimate Bounded(double value, double largest, double absolute) =>
             largest == 0 ? Estimate.Zero : new Estimate(value, Math.BitIncrement((value * relative) + (largest * absolute)), true);
-        var answer = new Answer(
+        var answer = new TimeAnswer(
             [.. problem.Rates.Select((_, r) => Bounded(sums.Rate(r) * rateScale, step.Largest(r), left))],
             [.. problem.Totals.Select((_, r) => Bounded(sums.Total(r) * totalScale, step.Largest(RateCount + r), leftOfTotals))],
             sums.Distribution,
@@ -167,6 +161,4 @@ internal sealed class UniformizationPass
         Array.Fill(ones, 1);
         return ones;
     }
-
-    private sealed record Answer(Estimate[] Rates, Estimate[] Totals, double[]? Distribution, double[]? Bounds);
 }

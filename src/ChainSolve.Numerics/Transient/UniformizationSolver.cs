@@ -17,7 +17,7 @@ public sealed class UniformizationSolver : ITransientSolver
     // What one entry of the generator takes in one step, with vectors of one double and of two, in operations of the kind
     // that runs from registers: the entries wait for memory.
     private const double PlainOperations = 6;
-    private const double WideOperations = 30;
+    private const double WideOperations = 14;
 
     // Up to about a second vectors are always of two doubles.
     private const double AffordableOperations = 8e9;
@@ -31,7 +31,7 @@ public sealed class UniformizationSolver : ITransientSolver
     public double Cost(TransientProblem problem)
     {
         ArgumentNullException.ThrowIfNull(problem);
-        var size = ProblemSize.Of(problem);
+        var size = ProblemSize.Estimate(problem);
         var mean = LongestMean(size, problem.Times);
         if (!(mean <= PoissonWindow.LargestMean))
         {
@@ -48,14 +48,15 @@ public sealed class UniformizationSolver : ITransientSolver
     public TransientResult Solve(TransientProblem problem, SolveContext context)
     {
         ArgumentNullException.ThrowIfNull(context);
-        var size = ProblemSize.Of(problem);
-        ReachedChain.CheckRange(size.LargestExit);
+        ProblemCheck.Check(problem);
         ProblemCheck.Range(problem, problem.Times.DefaultIfEmpty(0).Max());
         var reached = ReachedChain.Reach(problem.Generator, problem.Start, problem.Alive);
+        var size = ProblemSize.Of(problem.Generator, reached);
+        ReachedChain.CheckRange(size.LargestExit);
         if (size.LargestExit == 0 || problem.Times.All(t => t == 0))
         {
-            // Nothing moves: there is nothing to uniformize.
-            return new SquaringRun(problem, keepsAll: false).At(problem.Times, context);
+            var answers = problem.Times.Distinct().ToDictionary(t => t, t => TimeAnswer.Still(problem, t));
+            return TimeAnswer.Gather(problem.Times, answers, problem.WantsDistributions, "nothing moves");
         }
 
         var mean = LongestMean(size, problem.Times);
@@ -70,7 +71,7 @@ public sealed class UniformizationSolver : ITransientSolver
 
     /// <summary>Whether vectors of two doubles would be taken: where they take little, and where one would be too rough.</summary>
     internal static bool IsWide(TransientProblem problem) =>
-        ProblemSize.Of(problem) is var size && IsWide(problem, size, LongestMean(size, problem.Times), SolveContext.Default.Tolerance);
+        ProblemSize.Estimate(problem) is var size && IsWide(problem, size, LongestMean(size, problem.Times), SolveContext.Default.Tolerance);
 
     private static bool IsWide(TransientProblem problem, ProblemSize size, double mean, double tolerance)
     {

@@ -196,6 +196,23 @@ public class TransientSolverTests
     }
 
     [Fact]
+    public void Solve_ALargeChainWithTimeZero_IsAtItsStart()
+    {
+        var chain = Chains.Lattice([80, 80], (_, _) => 1, (_, _) => 2);
+        var start = Chains.StartAt(chain.StateCount, 5);
+        var problem = new TransientProblem { Generator = chain, Start = start, Times = [0, 0.1], Rates = [start], Totals = [start], WantsDistributions = true };
+        var choice = TransientSolvers.Select(problem);
+        var result = choice.Solver.Solve(problem, SolveContext.Default);
+
+        Assert.Equal("uniformization", choice.Solver.Name);
+        Assert.Equal(start, result.Distributions![0]);
+        Assert.Equal((1, Estimate.Zero), (result.Rates[0][0].Value, result.Totals[0][0]));
+        Assert.InRange(result.Rates[1][0].Value, Math.Exp(-0.1 * chain.ExitRate(5)), 1);
+        Assert.Contains("up to 3000", Assert.Throws<NotConvergedException>(
+            () => new SquaringSolver().Solve(problem, SolveContext.Default)).Message, StringComparison.Ordinal);
+    }
+
+    [Fact]
     public void Solve_OnTwoThreads_HasTheSameDigits()
     {
         var chain = Chains.Lattice([400, 300], (a, l) => 0.3 + (0.1 * a) + (0.01 * l), (a, l) => 1 + (0.2 * a * l));
