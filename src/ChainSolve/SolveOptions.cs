@@ -1,0 +1,49 @@
+using ChainSolve.Numerics.Absorption;
+using ChainSolve.Numerics.Iteration;
+using ChainSolve.Numerics.Stationary;
+using ChainSolve.Numerics.Transient;
+
+namespace ChainSolve;
+
+/// <summary>How a model is solved. Immutable; safe to share between threads.</summary>
+public sealed record SolveOptions
+{
+    /// <summary>The options that hold where none are given.</summary>
+    public static SolveOptions Default { get; } = new();
+
+    /// <summary>The relative accuracy wanted of every value, above 0 and below 1. More is computed where it costs little.</summary>
+    public double Tolerance { get; init; } = 1e-9;
+
+    /// <summary>Values whose size is surely below this need no relative accuracy.</summary>
+    public double Negligible { get; init; } = 1e-290;
+
+    /// <summary>The name of the method for values at a time; null to choose.</summary>
+    public string? TransientMethod { get; init; }
+
+    /// <summary>The name of the method for stationary vectors; null to choose.</summary>
+    public string? StationaryMethod { get; init; }
+
+    /// <summary>The name of the method for times to an event; null to choose.</summary>
+    public string? AbsorptionMethod { get; init; }
+
+    /// <summary>The methods for values at a time to choose from, own ones among them; null for all of this library.</summary>
+    public IReadOnlyList<ITransientSolver>? TransientSolvers { get; init; }
+
+    /// <summary>The methods for stationary vectors to choose from, own ones among them; null for all of this library.</summary>
+    public IReadOnlyList<IStationarySolver>? StationarySolvers { get; init; }
+
+    /// <summary>The methods for times to an event to choose from, own ones among them; null for all of this library.</summary>
+    public IReadOnlyList<IAbsorptionSolver>? AbsorptionSolvers { get; init; }
+
+    /// <summary>The most states that are explored, at least 1; beyond it <see cref="LimitExceededException"/>.</summary>
+    public long MaxStates { get; init; } = 20_000_000;
+
+    /// <summary>How long the call may take; beyond it <see cref="LimitExceededException"/>. Null for no limit.</summary>
+    public TimeSpan? TimeLimit { get; init; }
+
+    /// <summary>How many threads may work, at least 1. Results do not depend on it.</summary>
+    public int Threads { get; init; } = 1;
+
+    /// <summary>Told from time to time how far the call is; null for silence.</summary>
+    public IProgress<SolveProgress>? Progress { get; init; }
+}
