@@ -26,9 +26,10 @@ internal sealed class UniformizationPass
 
         // In one double the mass drifts; where none is lost it is known, and what it seems to be tells the drift.
         isKept = !isWide && !Loses();
-        var rates = isKept ? problem.Rates.Append(Ones()) : problem.Rates;
-        var totals = isKept ? problem.Totals.Append(Ones()) : problem.Totals;
-        (RateCount, TotalCount) = (rates.Count(), totals.Count());
+        double[][] ones = isKept ? [Ones()] : [];
+        double[][] rates = [.. problem.Rates, .. ones];
+        double[][] totals = [.. problem.Totals, .. ones];
+        (RateCount, TotalCount) = (rates.Length, totals.Length);
         step = new UniformizedStep(problem.Generator, problem.Start, reached, [.. rates, .. totals], isWide, context.Threads, context.Cancellation);
         for (var i = 0; i < reached.Length; i++)
         {

@@ -30,6 +30,7 @@ internal sealed class UniformizedStep
     private readonly double[] stays;
     private readonly double[]? staysLow;
     private readonly RewardList[] rewards;
+    private readonly int[] listOf;
     private readonly double[] partial;
     private readonly long[] dropped;
     private readonly double[] masses;
@@ -71,7 +72,11 @@ internal sealed class UniformizedStep
             x[i] = reached[i] ? start[i] : 0;
         }
 
-        this.rewards = [.. rewards.Select(r => new RewardList(r, reached, ChunkStates))];
+
+        // The same reward is often asked both as a rate and as a total: it is summed once.
+        double[][] distinct = [.. rewards.Distinct(ReferenceEqualityComparer.Instance).Cast<double[]>()];
+        this.rewards = [.. distinct.Select(r => new RewardList(r, reached, ChunkStates))];
+        listOf = [.. rewards.Select(r => Array.FindIndex(distinct, x => ReferenceEquals(x, r)))];
         partial = new double[ChunkCount * this.rewards.Length];
         dropped = new long[ChunkCount];
         masses = new double[ChunkCount];
@@ -120,7 +125,7 @@ internal sealed class UniformizedStep
     private int MostOut { get; set; }
 
     /// <summary>The largest entry of a reward among the states that are reached.</summary>
-    public double Largest(int reward) => rewards[reward].Largest;
+    public double Largest(int reward) => rewards[listOf[reward]].Largest;
 
     /// <summary>The vector times a reward, within 2.4e-16 relative of what the vector holds.</summary>
     public double Earned(int reward)
@@ -128,7 +133,7 @@ internal sealed class UniformizedStep
         LongSum sum = default;
         for (var c = 0; c < ChunkCount; c++)
         {
-            sum.Add(partial[(c * rewards.Length) + reward]);
+            sum.Add(partial[(c * rewards.Length) + listOf[reward]]);
         }
 
         return sum.Value;
