@@ -52,6 +52,15 @@ public sealed class SourceText
         return Content[start..end].TrimEnd('\r', '\n');
     }
 
+    /// <summary>The offset of the first character of a line.</summary>
+    /// <param name="line">Line number, from 1.</param>
+    public int StartOfLine(int line)
+    {
+        ArgumentOutOfRangeException.ThrowIfLessThan(line, 1);
+        ArgumentOutOfRangeException.ThrowIfGreaterThan(line, LineCount);
+        return lineStarts[line - 1];
+    }
+
     /// <summary>The characters of a span.</summary>
     public string Slice(TextSpan span) => Content.Substring(span.Start, span.Length);
 

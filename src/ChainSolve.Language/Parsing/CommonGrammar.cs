@@ -1,0 +1,107 @@
+using ChainSolve.Language.Diagnostics;
+using ChainSolve.Language.Lexing;
+using ChainSolve.Language.Syntax;
+using Superpower;
+using Superpower.Model;
+using static ChainSolve.Language.Parsing.Grammar;
+
+namespace ChainSolve.Language.Parsing;
+
+/// <summary>Expressions, ranges and texts, as the statements use them.</summary>
+internal static class CommonGrammar
+{
+    public static readonly TokenListParser<TokenKind, ExpressionSyntax> Expression = ExpressionReader.Read;
+
+    public static readonly TokenListParser<TokenKind, Token<TokenKind>> EqualSign = Symbol(TokenKind.Equal, "'='");
+
+    /// <summary>A number, a name or a bracket: where a whole expression would run into what follows.</summary>
+    public static readonly TokenListParser<TokenKind, ExpressionSyntax> Simple = input =>
+    {
+        var next = input.ConsumeToken();
+        if (!next.HasValue)
+        {
+            return TokenListParserResult.Empty<TokenKind, ExpressionSyntax>(input, ["a number, a name or '('"]);
+        }
+
+        var length = next.Value.Kind switch
+        {
+            TokenKind.Number or TokenKind.Name => 1,
+            TokenKind.OpenBracket => BracketLength(input),
+            _ => 0,
+        };
+        if (length == 0)
+        {
+            return TokenListParserResult.Empty<TokenKind, ExpressionSyntax>(input, ["a number, a name or '('"]);
+        }
+
+        var tokens = input.Take(length).ToArray();
+        var result = Expression(new TokenList<TokenKind>(tokens));
+        var rest = input;
+        for (var i = 0; i < length; i++)
+        {
+            rest = rest.ConsumeToken().Remainder;
+        }
+
+        return result.HasValue
+            ? TokenListParserResult.Value(result.Value, input, rest)
+            : TokenListParserResult.Empty<TokenKind, ExpressionSyntax>(input, ["a number, a name or '('"]);
+    };
+
+    /// <summary><c>LO .. HI</c>; a bare low end takes the unit that ends the high end.</summary>
+    public static readonly TokenListParser<TokenKind, RangeSyntax> Interval =
+        from low in Expression
+        from dots in Symbol(TokenKind.Range, "'..'")
+        from high in Expression
+        select RangeUnits.Share(low, high);
+
+    public static readonly TokenListParser<TokenKind, string> QuotedText = input =>
+    {
+        var next = input.ConsumeToken();
+        if (!next.HasValue || next.Value.Kind != TokenKind.Text)
+        {
+            return TokenListParserResult.Empty<TokenKind, string>(input, ["a text in quotes"]);
+        }
+
+        var text = next.Value.ToStringValue();
+        var inner = text.Length > 1 && text[^1] == '"' ? text[1..^1] : text[1..];
+        return TokenListParserResult.Value(Unescape(inner), input, next.Remainder);
+    };
+
+    private static string Unescape(string text)
+    {
+        var plain = new System.Text.StringBuilder(text.Length);
+        for (var i = 0; i < text.Length; i++)
+        {
+            if (text[i] == '\\' && i + 1 < text.Length)
+            {
+                i++;
+            }
+
+            plain.Append(text[i]);
+        }
+
+        return plain.ToString();
+    }
+
+    private static int BracketLength(TokenList<TokenKind> input)
+    {
+        var open = 0;
+        var length = 0;
+        foreach (var token in input)
+        {
+            length++;
+            open += token.Kind switch
+            {
+                TokenKind.OpenBracket => 1,
+                TokenKind.CloseBracket => -1,
+                _ => 0,
+            };
+            if (open == 0)
+            {
+                return length;
+            }
+        }
+
+        throw new SyntaxFaultException(TextCodes.Unclosed, input.ConsumeToken().Value.Place(), "this '(' is not closed; put a ')' behind the expression");
+    }
+}

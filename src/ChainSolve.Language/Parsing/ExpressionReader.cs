@@ -1,0 +1,406 @@
+using ChainSolve.Language.Diagnostics;
+using ChainSolve.Language.Lexing;
+using ChainSolve.Language.Syntax;
+using Superpower.Model;
+using TextSpan = ChainSolve.Language.Text.TextSpan;
+
+namespace ChainSolve.Language.Parsing;
+
+/// <summary>
+/// Reads one expression by precedence climbing. It works on the stack of the caller, so nesting is limited; runs of operators of
+/// one level are read in a loop and may be of any length.
+/// </summary>
+internal sealed class ExpressionReader(TokenList<TokenKind> tokens)
+{
+    /// <summary>How deep brackets, calls, powers, signs and conditionals may nest.</summary>
+    public const int DeepestNesting = 128;
+
+    private static readonly string[] Expected = ["a number, a name or '('"];
+
+    private TokenList<TokenKind> rest = tokens;
+    private int depth;
+
+    /// <summary>Reads as far as the expression goes; a result without a value says what was expected where.</summary>
+    public static TokenListParserResult<TokenKind, ExpressionSyntax> Read(TokenList<TokenKind> tokens)
+    {
+        var reader = new ExpressionReader(tokens);
+        var value = reader.Whole();
+        return value is null
+            ? TokenListParserResult.Empty<TokenKind, ExpressionSyntax>(reader.rest, Expected)
+            : TokenListParserResult.Value(value, tokens, reader.rest);
+    }
+
+    private ExpressionSyntax? Whole() => NextIs("if") ? Conditional() : Chain(Level.Or);
+
+    private ConditionalSyntax? Conditional()
+    {
+        var start = Take();
+        Enter(start);
+        if (Chain(Level.Or) is not { } condition || !TakeWord("then", start))
+        {
+            return null;
+        }
+
+        if (Whole() is not { } whenTrue || !TakeWord("else", start) || Whole() is not { } whenFalse)
+        {
+            return null;
+        }
+
+        depth--;
+        return new ConditionalSyntax
+        {
+            Span = TextSpan.Cover(start.Place(), whenFalse.Span),
+            Condition = condition,
+            WhenTrue = whenTrue,
+            WhenFalse = whenFalse,
+        };
+    }
+
+    private bool TakeWord(string word, Token<TokenKind> start)
+    {
+        if (NextIs(word))
+        {
+            Take();
+            return true;
+        }
+
+        throw new SyntaxFaultException(
+            TextCodes.Unexpected, Peek() is { } next ? next.Place() : start.Place(), $"expected '{word}' here; an 'if' is written 'if CONDITION then A else B'");
+    }
+
+    private ExpressionSyntax? Chain(Level level)
+    {
+        if (Operand(level) is not { } first)
+        {
+            return null;
+        }
+
+        List<ChainLink>? links = null;
+        while (Peek() is { } token && Operators.ChainOperatorOf(token, level) is { } chainOperator)
+        {
+            Take();
+            var operand = chainOperator == ChainOperator.Per ? PerUnit(token) : Operand(level);
+            if (operand is null)
+            {
+                return null;
+            }
+
+            (links ??= []).Add(new ChainLink { Span = TextSpan.Cover(token.Place(), operand.Span), Operator = chainOperator, Operand = operand });
+        }
+
+        return links is null ? first : new ChainSyntax { Span = TextSpan.Cover(first.Span, links[^1].Span), First = first, Rest = links };
+    }
+
+    private ExpressionSyntax? Operand(Level level)
+    {
+        if (NextIs("if"))
+        {
+            throw new SyntaxFaultException(TextCodes.IfForm, Peek()!.Value.Place(), "an 'if' inside an expression needs brackets around it: '(if … then … else …)'");
+        }
+
+        return level switch
+        {
+            Level.Or => Chain(Level.And),
+            Level.And => Negation(),
+            Level.Sum => Chain(Level.Product),
+            _ => Signed(),
+        };
+    }
+
+    private ExpressionSyntax? Negation()
+    {
+        if (!NextIs("not"))
+        {
+            return Comparison();
+        }
+
+        var word = Take();
+        Enter(word);
+        if (Negation() is not { } operand)
+        {
+            return null;
+        }
+
+        depth--;
+        return new UnarySyntax { Span = TextSpan.Cover(word.Place(), operand.Span), Operator = UnaryOperator.Not, Operand = operand };
+    }
+
+    private ExpressionSyntax? Comparison()
+    {
+        if (Chain(Level.Sum) is not { } left)
+        {
+            return null;
+        }
+
+        if (Peek() is not { } token || Operators.ComparisonOf(token.Kind) is not { } comparison)
+        {
+            return left;
+        }
+
+        Take();
+        if (Chain(Level.Sum) is not { } right)
+        {
+            return null;
+        }
+
+        if (Peek() is { } again && Operators.ComparisonOf(again.Kind) is not null)
+        {
+            throw new SyntaxFaultException(TextCodes.ChainedComparison, again.Place(), "comparisons do not chain; write 'a < b and b < c'");
+        }
+
+        return new BinarySyntax { Span = TextSpan.Cover(left.Span, right.Span), Operator = comparison, Left = left, Right = right };
+    }
+
+    private ExpressionSyntax? Signed()
+    {
+        if (!NextIs(TokenKind.Minus))
+        {
+            return Power();
+        }
+
+        var sign = Take();
+        Enter(sign);
+        if (Signed() is not { } operand)
+        {
+            return null;
+        }
+
+        depth--;
+        return new UnarySyntax { Span = TextSpan.Cover(sign.Place(), operand.Span), Operator = UnaryOperator.Negate, Operand = operand };
+    }
+
+    private ExpressionSyntax? Power()
+    {
+        if (WithUnit() is not { } @base)
+        {
+            return null;
+        }
+
+        if (!NextIs(TokenKind.Caret))
+        {
+            return @base;
+        }
+
+        var caret = Take();
+        if (@base is UnitSyntax)
+        {
+            throw new SyntaxFaultException(TextCodes.UnitForm, caret.Place(), "a power cannot stand behind a unit; bracket it: '(9 h)^2'");
+        }
+
+        Enter(caret);
+        if (Signed() is not { } exponent)
+        {
+            return null;
+        }
+
+        depth--;
+        return new BinarySyntax { Span = TextSpan.Cover(@base.Span, exponent.Span), Operator = BinaryOperator.Power, Left = @base, Right = exponent };
+    }
+
+    private ExpressionSyntax? WithUnit()
+    {
+        var operand = Primary();
+        if (operand is not (NumberSyntax or BracketSyntax) || Peek() is not { } next)
+        {
+            return operand;
+        }
+
+        if (next.Kind == TokenKind.Percent || (next.Kind == TokenKind.Name && UnitWords.Contains(next.Words())))
+        {
+            Take();
+            return new UnitSyntax { Span = TextSpan.Cover(operand.Span, next.Place()), Operand = operand, Unit = Grammar.IdentifierOf(next) };
+        }
+
+        return operand;
+    }
+
+    private ExpressionSyntax? Primary()
+    {
+        if (Peek() is not { } token)
+        {
+            return null;
+        }
+
+        switch (token.Kind)
+        {
+            case TokenKind.Number:
+                Take();
+                return NumberOf(token);
+            case TokenKind.OpenBracket:
+                return Bracket();
+            case TokenKind.Name when !Words.Reserved.Contains(token.Words()):
+                return Named();
+            default:
+                return null;
+        }
+    }
+
+    private BracketSyntax? Bracket()
+    {
+        var open = Take();
+        Enter(open);
+        if (Whole() is not { } inner)
+        {
+            return null;
+        }
+
+        var close = Close(open);
+        depth--;
+        return new BracketSyntax { Span = TextSpan.Cover(open.Place(), close.Place()), Inner = inner };
+    }
+
+    private ExpressionSyntax? Named()
+    {
+        var name = Take();
+        if (NextIs(TokenKind.OpenBracket))
+        {
+            return Call(name);
+        }
+
+        if (NextIs(TokenKind.Dot))
+        {
+            Take();
+            var member = Member(name, "the name of a state behind '.'");
+            return new MemberSyntax { Span = TextSpan.Cover(name.Place(), member.Span), Owner = Grammar.IdentifierOf(name), Member = member };
+        }
+
+        if (!NextIs("is"))
+        {
+            return new NameSyntax { Span = name.Place(), Name = Grammar.IdentifierOf(name) };
+        }
+
+        Take();
+        if (NextIs("not"))
+        {
+            var word = Take();
+            var denied = Peek() is { Kind: TokenKind.Name } state ? state.Words() : "STATE";
+            throw new SyntaxFaultException(TextCodes.IsForm, word.Place(), $"'is not' is not read; write 'not {name.Words()} is {denied}'");
+        }
+
+        var tested = Member(name, "the name of a state behind 'is'");
+        return new IsSyntax { Span = TextSpan.Cover(name.Place(), tested.Span), Owner = Grammar.IdentifierOf(name), Member = tested };
+    }
+
+    private CallSyntax? Call(Token<TokenKind> name)
+    {
+        var open = Take();
+        Enter(open);
+        var arguments = new List<ExpressionSyntax>();
+        if (!NextIs(TokenKind.CloseBracket))
+        {
+            while (true)
+            {
+                if (Whole() is not { } argument)
+                {
+                    return null;
+                }
+
+                arguments.Add(argument);
+                if (!NextIs(TokenKind.Comma))
+                {
+                    break;
+                }
+
+                Take();
+            }
+        }
+
+        var close = Close(open);
+        depth--;
+        return new CallSyntax { Span = TextSpan.Cover(name.Place(), close.Place()), Function = Grammar.IdentifierOf(name), Arguments = arguments };
+    }
+
+    private Identifier Member(Token<TokenKind> owner, string what)
+    {
+        if (Peek() is { Kind: TokenKind.Name } state && !Words.Reserved.Contains(state.Words()))
+        {
+            return Grammar.IdentifierOf(Take());
+        }
+
+        throw new SyntaxFaultException(TextCodes.Unexpected, Peek() is { } next ? next.Place() : owner.Place(), $"expected {what}");
+    }
+
+    private PerUnitSyntax PerUnit(Token<TokenKind> per)
+    {
+        NumberSyntax? count = null;
+        if (NextIs(TokenKind.Number))
+        {
+            count = NumberOf(Take());
+        }
+
+        if (Peek() is { Kind: TokenKind.Name } unit && UnitWords.Contains(unit.Words()))
+        {
+            Take();
+            if (NextIs(TokenKind.Caret))
+            {
+                throw new SyntaxFaultException(TextCodes.UnitForm, Peek()!.Value.Place(), "a power cannot stand behind a unit; bracket it: '(2 per h)^2'");
+            }
+
+            var name = Grammar.IdentifierOf(unit);
+            return new PerUnitSyntax { Span = TextSpan.Cover(count?.Span ?? name.Span, name.Span), Count = count, Unit = name };
+        }
+
+        var found = Peek();
+        var hint = found is { Kind: TokenKind.Name } word && Suggestions.Nearest(word.Words(), UnitWords.All) is { } nearest ? $"; nearest: '{nearest}'" : "";
+        throw new SyntaxFaultException(
+            TextCodes.UnitForm, found is { } token ? token.Place() : per.Place(), $"expected a unit of time behind 'per', such as 'per h' or 'per 1000 h'{hint}");
+    }
+
+    private Token<TokenKind> Close(Token<TokenKind> open)
+    {
+        if (NextIs(TokenKind.CloseBracket))
+        {
+            return Take();
+        }
+
+        if (Peek() is { } next && next.Kind is not (TokenKind.OpenBrace or TokenKind.CloseBrace or TokenKind.LineEnd))
+        {
+            throw new SyntaxFaultException(TextCodes.Unexpected, next.Place(), $"expected an operator or ')' before '{next.Words()}'{UnitHint(next)}");
+        }
+
+        throw new SyntaxFaultException(TextCodes.Unclosed, open.Place(), "this '(' is not closed; put a ')' behind the expression");
+    }
+
+    /// <summary>Says that a word behind a number is no unit, where that is what went wrong.</summary>
+    public static string UnitHint(Token<TokenKind> found)
+    {
+        if (found.Kind != TokenKind.Name || Words.Reserved.Contains(found.Words()))
+        {
+            return "";
+        }
+
+        var nearest = Suggestions.Nearest(found.Words(), UnitWords.All.Where(u => u.Length > 1));
+        return nearest is null ? "" : $"; nearest unit: '{nearest}'";
+    }
+
+    private static NumberSyntax NumberOf(Token<TokenKind> token)
+    {
+        var text = token.ToStringValue();
+        return new NumberSyntax { Span = token.Place(), Value = NumberScanner.ValueOf(text), Text = text };
+    }
+
+    private void Enter(Token<TokenKind> token)
+    {
+        if (++depth > DeepestNesting)
+        {
+            throw new SyntaxFaultException(TextCodes.TooDeep, token.Place(), $"brackets nest deeper than {DeepestNesting}; name a part of the expression with 'let'");
+        }
+    }
+
+    private Token<TokenKind>? Peek()
+    {
+        var next = rest.ConsumeToken();
+        return next.HasValue ? next.Value : null;
+    }
+
+    private bool NextIs(TokenKind kind) => Peek() is { } token && token.Kind == kind;
+
+    private bool NextIs(string word) => Peek() is { } token && token.Is(word);
+
+    private Token<TokenKind> Take()
+    {
+        var next = rest.ConsumeToken();
+        rest = next.Remainder;
+        return next.Value;
+    }
+}
