@@ -46,4 +46,37 @@ public sealed record SolveOptions
 
     /// <summary>Told from time to time how far the call is; null for silence.</summary>
     public IProgress<SolveProgress>? Progress { get; init; }
+
+    /// <summary>Throws where an option has no meaning.</summary>
+    internal void Check()
+    {
+        if (!(Tolerance > 0) || Tolerance >= 1)
+        {
+            throw new ArgumentOutOfRangeException(nameof(Tolerance), Tolerance, "The tolerance is relative: above 0 and below 1.");
+        }
+
+        if (!(Negligible >= 0) || !double.IsFinite(Negligible))
+        {
+            throw new ArgumentOutOfRangeException(nameof(Negligible), Negligible, "A size below which values are negligible is finite and not negative.");
+        }
+
+        ArgumentOutOfRangeException.ThrowIfLessThan(MaxStates, 1, nameof(MaxStates));
+        ArgumentOutOfRangeException.ThrowIfLessThan(Threads, 1, nameof(Threads));
+        if (TimeLimit is { } limit && (limit <= TimeSpan.Zero || limit.TotalMilliseconds > int.MaxValue))
+        {
+            throw new ArgumentOutOfRangeException(nameof(TimeLimit), limit, "A time limit is above 0 and at most 24 days.");
+        }
+
+        Known(TransientMethod, (TransientSolvers ?? Numerics.Transient.TransientSolvers.All).Select(s => s.Name), "transient", nameof(TransientMethod));
+        Known(StationaryMethod, (StationarySolvers ?? Numerics.Stationary.StationarySolvers.All).Select(s => s.Name), "stationary", nameof(StationaryMethod));
+        Known(AbsorptionMethod, (AbsorptionSolvers ?? Numerics.Absorption.AbsorptionSolvers.All).Select(s => s.Name), "absorption", nameof(AbsorptionMethod));
+    }
+
+    private static void Known(string? method, IEnumerable<string> names, string job, string parameter)
+    {
+        if (method is not null && !names.Contains(method, StringComparer.Ordinal))
+        {
+            throw new ArgumentException($"There is no {job} method '{method}'; the methods are {string.Join(", ", names)}.", parameter);
+        }
+    }
 }
