@@ -35,7 +35,22 @@ internal sealed record BoundGiven
 /// <summary>A unit as people write it behind a number.</summary>
 /// <param name="Text">As written: <c>h</c>, <c>per h</c>, <c>per 1000 h</c>, <c>%</c>; empty for a plain number.</param>
 /// <param name="Factor">What a number with this unit is multiplied by to give the value in the model's time base.</param>
-internal sealed record OutsideUnit(string Text, double Factor);
+internal sealed record OutsideUnit(string Text, double Factor)
+{
+    /// <summary>No unit at all.</summary>
+    public static OutsideUnit None { get; } = new("", 1);
+
+    /// <summary><see cref="Factor"/> is this over <see cref="Divide"/>; both are whole numbers mostly, so that conversion rounds once.</summary>
+    public double Multiply { get; init; } = Factor;
+
+    public double Divide { get; init; } = 1;
+
+    /// <summary>The value in the time base of a number with this unit.</summary>
+    public double ToBase(double number) => number * Multiply / Divide;
+
+    /// <summary>The number in this unit of a value in the time base.</summary>
+    public double FromBase(double value) => value * Divide / Multiply;
+}
 
 /// <summary>A distribution of a given, read and kept.</summary>
 /// <param name="Kind">The law.</param>

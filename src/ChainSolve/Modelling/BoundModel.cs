@@ -27,6 +27,8 @@ internal sealed record BoundModel
 
     public required IReadOnlyList<BoundCounter> Counters { get; init; }
 
+    public IReadOnlyList<BoundCrew> Crews { get; init; } = [];
+
     /// <summary>Every place and counter by its index in a marking.</summary>
     public required IReadOnlyList<BoundVariable> Variables { get; init; }
 

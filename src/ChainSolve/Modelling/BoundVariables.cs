@@ -46,6 +46,12 @@ internal sealed record BoundCounter
     public required TextSpan Span { get; init; }
 }
 
+/// <summary>A crew. Its effect on rates is part of the transitions already.</summary>
+/// <param name="Name">The name.</param>
+/// <param name="Count">How many jobs it serves at once, a whole number that is not negative; reads givens only.</param>
+/// <param name="Span">Where its count is written.</param>
+internal sealed record BoundCrew(string Name, NumberExpr Count, TextSpan Span);
+
 /// <summary>A component of a marking.</summary>
 /// <param name="Item">Index of the item, or -1 for a counter.</param>
 /// <param name="State">Index of the item's state, or of the counter among the counters.</param>
