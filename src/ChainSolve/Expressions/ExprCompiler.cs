@@ -1,0 +1,19 @@
+using System.Runtime.CompilerServices;
+
+namespace ChainSolve.Expressions;
+
+/// <summary>Makes expressions ready to be evaluated.</summary>
+internal static class ExprCompiler
+{
+    // The just-in-time compiler takes more than linear time on very long methods.
+    private const int LongestMethod = 50_000;
+
+    /// <summary>One program for some expressions. Cost: linear in the size of their graph.</summary>
+    public static IExprProgram Compile(IReadOnlyList<Expr> outputs, ExprBackEnd backEnd = ExprBackEnd.Fastest)
+    {
+        var list = InstructionList.Of(outputs);
+        return backEnd == ExprBackEnd.Fastest && RuntimeFeature.IsDynamicCodeCompiled && list.Instructions.Length <= LongestMethod
+            ? CompiledProgram.Of(list)
+            : new InterpretedProgram(list);
+    }
+}
