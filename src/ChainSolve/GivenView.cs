@@ -1,4 +1,5 @@
 using System.Globalization;
+using ChainSolve.Binding;
 using ChainSolve.Modelling;
 
 namespace ChainSolve;
@@ -10,23 +11,14 @@ internal static class GivenView
     {
         if (given.OutsideUnit is not { } unit)
         {
-            return new GivenInfo(given.Name, value, BaseUnit(given.TimePower, timeBase));
+            return new GivenInfo(given.Name, value, GivenText.BaseUnit(given.TimePower, timeBase));
         }
 
         // What people wrote is a short number: it is taken where it means the same value.
-        var shown = value / unit.Factor;
+        var shown = unit.FromBase(value);
         var rounded = double.IsFinite(shown)
             ? double.Parse(shown.ToString("G15", CultureInfo.InvariantCulture), CultureInfo.InvariantCulture)
             : shown;
-        return new GivenInfo(given.Name, Math.Abs((rounded * unit.Factor) - value) <= Math.Abs(value) * 2.3e-16 ? rounded : shown, unit.Text);
+        return new GivenInfo(given.Name, unit.ToBase(rounded) == value ? rounded : shown, unit.Text);
     }
-
-    private static string BaseUnit(int power, TimeBase timeBase) => (power, timeBase.IsUnitless) switch
-    {
-        (0, _) or (_, true) => "",
-        (1, _) => timeBase.Unit,
-        (-1, _) => $"per {timeBase.Unit}",
-        ( > 1, _) => FormattableString.Invariant($"{timeBase.Unit}^{power}"),
-        _ => FormattableString.Invariant($"per {timeBase.Unit}^{-power}"),
-    };
 }

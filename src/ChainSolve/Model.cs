@@ -1,5 +1,6 @@
 using System.Security.Cryptography;
 using System.Text;
+using ChainSolve.Binding;
 using ChainSolve.Language.Diagnostics;
 using ChainSolve.Measures;
 using ChainSolve.Modelling;
@@ -28,10 +29,11 @@ public sealed partial class Model
     private readonly BoundModel bound;
     private readonly GivenValues givens;
     private readonly ChainHolder chains;
+    private readonly IReadOnlyList<GivenSetting> settings;
 
-    internal Model(BoundModel bound, GivenValues givens, ChainHolder chains)
+    internal Model(BoundModel bound, GivenValues givens, ChainHolder chains, IReadOnlyList<GivenSetting> settings)
     {
-        (this.bound, this.givens, this.chains) = (bound, givens, chains);
+        (this.bound, this.givens, this.chains, this.settings) = (bound, givens, chains, settings);
         Givens = [.. bound.Givens.Select((g, i) => GivenView.Of(g, givens[i], bound.TimeBase))];
         Measures = [.. bound.Measures.Select(m => new MeasureInfo(m.Name, MeasureWords.Of(m.Kind), m.Sentence, m.Unit, m.Times.Count > 0))];
     }

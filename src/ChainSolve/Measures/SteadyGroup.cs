@@ -68,7 +68,7 @@ internal sealed class SteadyGroup(IReadOnlyList<SteadyPlan> plans) : MeasureGrou
             : "";
         var model = context.Chain.Model;
         return new Diagnostic(
-            NumericCodes.SeveralClasses,
+            NumericCodes.SeveralClasses.Code,
             Severity.Warning,
             string.Create(
                 CultureInfo.InvariantCulture,

@@ -29,7 +29,8 @@ internal static class Sample
             Warnings = [],
         },
         new GivenValues([3.0 / 8760, 2, 84]),
-        new ChainHolder((_, _, _, _) => throw new InvalidOperationException("Nothing is solved here.")));
+        new ChainHolder((_, _, _, _) => throw new InvalidOperationException("Nothing is solved here.")),
+        []);
 
     public static Solution Solution() => new()
     {
