@@ -34,7 +34,7 @@ public sealed partial class Model
                     $"the model has {count:N0} states; a transition matrix is made for up to {Numerics.Transient.TransitionMatrix.MaxStates:N0}: ask for the most likely states instead"));
             }
 
-            var matrix = Numerics.Transient.TransitionMatrix.Compute(chain.Generator, time, Context(used, token));
+            var matrix = Numerics.Transient.TransitionMatrix.Compute(chain.Generator, time, used.Context(token));
             return new StateMatrix(matrix, [.. Enumerable.Range(0, count).Select(chain.Describe)]);
         }
     }
@@ -71,7 +71,7 @@ public sealed partial class Model
     {
         var problem = new TransientProblem { Generator = chain.Generator, Start = chain.Start, Times = [time], WantsDistributions = true };
         var (result, choice) = Numerics.Transient.TransientSolvers.Solve(
-            problem, options.TransientMethod, options.TransientSolvers, Context(options, cancellation));
+            problem, options.TransientMethod, options.TransientSolvers, options.Context(cancellation));
         return new LikelyStates
         {
             Time = time,
@@ -84,14 +84,7 @@ public sealed partial class Model
 
     private static LikelyStates LikelyAtLast(Chain chain, int count, SolveOptions options, CancellationToken cancellation)
     {
-        var solvers = new SolverOptions
-        {
-            Stationary = options.StationaryMethod,
-            Absorption = options.AbsorptionMethod,
-            StationarySolvers = options.StationarySolvers,
-            AbsorptionSolvers = options.AbsorptionSolvers,
-        };
-        var result = LongRun.Solve(chain.Generator, chain.Start, solvers, Context(options, cancellation));
+        var result = LongRun.Solve(chain.Generator, chain.Start, options.Solvers(), options.Context(cancellation));
         return new LikelyStates
         {
             Time = null,
@@ -108,13 +101,4 @@ public sealed partial class Model
             .ThenBy(i => i)
             .Take(count)
             .Select(i => new LikelyState(chain.Describe(i), chances[i], bound(i)))];
-
-    private static SolveContext Context(SolveOptions options, CancellationToken cancellation) => new()
-    {
-        Cancellation = cancellation,
-        Progress = options.Progress,
-        Tolerance = options.Tolerance,
-        Negligible = options.Negligible,
-        Threads = options.Threads,
-    };
 }

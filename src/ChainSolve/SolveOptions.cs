@@ -47,6 +47,25 @@ public sealed record SolveOptions
     /// <summary>Told from time to time how far the call is; null for silence.</summary>
     public IProgress<SolveProgress>? Progress { get; init; }
 
+    /// <summary>What solvers are told besides their problem.</summary>
+    internal SolveContext Context(CancellationToken cancellation) => new()
+    {
+        Cancellation = cancellation,
+        Progress = Progress,
+        Tolerance = Tolerance,
+        Negligible = Negligible,
+        Threads = Threads,
+    };
+
+    /// <summary>The methods for long-run and first-passage values.</summary>
+    internal SolverOptions Solvers() => new()
+    {
+        Stationary = StationaryMethod,
+        Absorption = AbsorptionMethod,
+        StationarySolvers = StationarySolvers,
+        AbsorptionSolvers = AbsorptionSolvers,
+    };
+
     /// <summary>Throws where an option has no meaning.</summary>
     internal void Check()
     {

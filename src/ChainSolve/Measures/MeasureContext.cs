@@ -11,21 +11,8 @@ internal sealed record MeasureContext
     {
         (Chain, Options) = (chain, options);
         Course = new Course([new Segment(chain.Generator, double.PositiveInfinity)], []);
-        Solve = new SolveContext
-        {
-            Cancellation = cancellation,
-            Progress = options.Progress,
-            Tolerance = options.Tolerance,
-            Negligible = options.Negligible,
-            Threads = options.Threads,
-        };
-        Solvers = new SolverOptions
-        {
-            Stationary = options.StationaryMethod,
-            Absorption = options.AbsorptionMethod,
-            StationarySolvers = options.StationarySolvers,
-            AbsorptionSolvers = options.AbsorptionSolvers,
-        };
+        Solve = options.Context(cancellation);
+        Solvers = options.Solvers();
     }
 
     public Chain Chain { get; }

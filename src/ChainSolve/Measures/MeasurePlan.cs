@@ -77,7 +77,7 @@ internal sealed class MeasurePlan
                 Reason = p.Reason,
             })],
             Status = failure is not null ? SolveStatus.Failed : isShort ? SolveStatus.Short : SolveStatus.Ok,
-            Reason = failure ?? (isShort ? FormattableString.Invariant($"an error bound is wider than the {options.Tolerance:R} of the value that was asked for") : null),
+            Reason = failure ?? (isShort ? FormattableString.Invariant($"an error bound is wider than the {options.Tolerance:0.###e-0} of the value that was asked for") : null),
             Method = answer.Method,
             Why = answer.Why,
             How = answer.How,

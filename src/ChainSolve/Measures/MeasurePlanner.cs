@@ -6,6 +6,9 @@ namespace ChainSolve.Measures;
 /// <summary>Turns measures into plans and sorts them into groups. Not safe to share between threads.</summary>
 internal sealed class MeasurePlanner(MeasureContext context)
 {
+    // Sums of times by rewards that never matter.
+    private const double FewSums = 10_000;
+
     private readonly StateVectors vectors = new(context.Chain, context.Solve.Cancellation);
     private readonly List<CurvePlan> curves = [];
     private readonly List<SteadyPlan> steady = [];
@@ -17,7 +20,7 @@ internal sealed class MeasurePlanner(MeasureContext context)
         var all = new object();
         return
         [
-            .. curves.GroupBy(p => (object?)p.Alive ?? all, ReferenceEqualityComparer.Instance).Select(g => new CurveGroup([.. g])),
+            .. curves.GroupBy(p => (object?)p.Alive ?? all, ReferenceEqualityComparer.Instance).SelectMany(g => Passes([.. g])),
             .. steady.Count > 0 ? [new SteadyGroup(steady)] : Array.Empty<MeasureGroup>(),
             .. passages.GroupBy(p => p.Alive, ReferenceEqualityComparer.Instance).Select(g => new PassageGroup([.. g])),
         ];
@@ -39,6 +42,18 @@ internal sealed class MeasurePlanner(MeasureContext context)
         }
     }
 
+    /// <summary>One pass, unless it would spend far more on sums that nobody asked for than on the chain.</summary>
+    private IEnumerable<CurveGroup> Passes(CurvePlan[] plans)
+    {
+        double times = plans.SelectMany(p => p.Ask.Times).Distinct().Count();
+        double asked = plans.Sum(p => p.Ask.Times.Count);
+        var sums = times * plans.Length;
+        var step = context.Chain.Generator.TransitionCount + context.Chain.Generator.StateCount;
+        return sums <= Math.Max(FewSums, 4 * Math.Max(asked, step))
+            ? [new CurveGroup(plans)]
+            : plans.GroupBy(p => string.Join(' ', p.Ask.Times.Order())).Select(g => new CurveGroup([.. g]));
+    }
+
     private CurvePlan Curve(MeasureAsk ask)
     {
         var measure = ask.Measure;
@@ -55,13 +70,13 @@ internal sealed class MeasurePlanner(MeasureContext context)
                     Form = CurveForm.Total,
                     Alive = vectors.Not(target),
                     Gain = vectors.Entering(target),
-                    GainRounding = SumRounding,
+                    GainRounding = MeasurePlan.SumRounding,
                     Offset = StartIn(target),
                 };
             case MeasureKind.Entries:
                 var entered = vectors.Entering(vectors.Holds(measure.Condition!));
                 var form = measure.Scope == MeasureScope.At ? CurveForm.Rate : CurveForm.Total;
-                return new CurvePlan { Ask = ask, Form = form, Alive = null, Gain = entered, GainRounding = SumRounding };
+                return new CurvePlan { Ask = ask, Form = form, Alive = null, Gain = entered, GainRounding = MeasurePlan.SumRounding };
             default:
                 var (gain, loss) = Earned(ask);
                 return new CurvePlan { Ask = ask, Form = FormOf(measure.Kind), Alive = null, Gain = gain, Loss = loss };
@@ -73,7 +88,7 @@ internal sealed class MeasurePlanner(MeasureContext context)
         switch (ask.Measure.Kind)
         {
             case MeasureKind.Entries:
-                return new SteadyPlan { Ask = ask, Gain = vectors.Entering(vectors.Holds(ask.Measure.Condition!)), GainRounding = SumRounding };
+                return new SteadyPlan { Ask = ask, Gain = vectors.Entering(vectors.Holds(ask.Measure.Condition!)), GainRounding = MeasurePlan.SumRounding };
             case MeasureKind.MeanSpell:
                 var held = vectors.Holds(ask.Measure.Condition!);
                 return new SteadyPlan { Ask = ask, Gain = vectors.Ones(held), Leaving = vectors.Entering(vectors.Not(held)) };
@@ -111,6 +126,4 @@ internal sealed class MeasurePlanner(MeasureContext context)
         MeasureKind.Average => CurveForm.Average,
         _ => CurveForm.Rate,
     };
-
-    private const double SumRounding = MeasurePlan.SumRounding;
 }

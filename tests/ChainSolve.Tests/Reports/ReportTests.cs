@@ -32,7 +32,7 @@ public class ReportTests
 
         rough = expected flow steady
             1.2e3 per h  ± 20
-            short: an error bound is wider than the 1e-09 of the value that was asked for
+            short: an error bound is wider than the 1e-9 of the value that was asked for
             by squaring (the chain is small)
             4 states, 25 levels
 

@@ -61,7 +61,7 @@ internal static class Sample
             {
                 Points = [Point(null, 1234.5, 20) with { Status = SolveStatus.Short }],
                 Status = SolveStatus.Short,
-                Reason = "an error bound is wider than the 1e-09 of the value that was asked for",
+                Reason = "an error bound is wider than the 1e-9 of the value that was asked for",
             },
             Measure("spell", "mean spell", "mean spell stopped steady", "h") with
             {
