@@ -46,8 +46,7 @@ internal sealed class DimensionRules(BindContext context)
     private void ReportUnlike(
         (Quantity Value, ExpressionSyntax Syntax) first, (Quantity Value, ExpressionSyntax Syntax) second, string action)
     {
-        var mend = MissingUnit(second.Value.Dimension, second.Syntax, first.Value.Dimension)
-            ?? MissingUnit(first.Value.Dimension, first.Syntax, second.Value.Dimension);
+        var mend = MissingBeside(second, first) ?? MissingBeside(first, second);
         var offender = first.Value.Dimension.IsPlain && !second.Value.Dimension.IsPlain ? first : second;
         context.Report(BindingFaults.UnlikeDimensions(
             action,
@@ -58,6 +57,10 @@ internal sealed class DimensionRules(BindContext context)
             offender.Syntax.Span,
             mend));
     }
+
+    // What counts replicas or a counter is plain for good; the other side is wrong then.
+    private string? MissingBeside((Quantity Value, ExpressionSyntax Syntax) bare, (Quantity Value, ExpressionSyntax Syntax) other) =>
+        bare.Value.ReadsState ? null : MissingUnit(bare.Value.Dimension, bare.Syntax, other.Value.Dimension);
 
     private string? MissingUnit(Dimension found, ExpressionSyntax syntax, Dimension needed)
     {

@@ -18,6 +18,15 @@ internal static class GivenEvaluator
         return values;
     }
 
-    public static double ValueOf(NumberExpr expr, double[] givens) =>
-        expr is ConstantExpr constant ? constant.Value : ExprValue.Of(expr, [], givens);
+    public static double ValueOf(NumberExpr expr, double[] givens)
+    {
+        if (expr is ConstantExpr constant)
+        {
+            return constant.Value;
+        }
+
+        Span<double> value = stackalloc double[1];
+        ExprCompiler.Compile([expr], ExprBackEnd.Interpreted).Run([], givens, value);
+        return value[0];
+    }
 }

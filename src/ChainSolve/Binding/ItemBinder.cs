@@ -14,7 +14,7 @@ internal sealed class ItemBinder(BindContext context, NameTable names, Expressio
         context.Sink.Enter(item.Head, prefix);
         item.Count = BindCount(item);
         var scope = BindLocals(item, out var used);
-        var start = BindStart(item, prefix);
+        var start = BindStart(item, scope, prefix);
         new MoveBinder(context, names, expressions, effects).Bind(item, scope, prefix);
         WarnOfLocals(item, used);
         return item.Count is null || start is null
@@ -69,7 +69,7 @@ internal sealed class ItemBinder(BindContext context, NameTable names, Expressio
         }
     }
 
-    private NumberExpr[]? BindStart(ItemSymbol item, string prefix)
+    private NumberExpr[]? BindStart(ItemSymbol item, ExprScope scope, string prefix)
     {
         var clauses = item.Syntax.Clauses.OfType<StartSyntax>().ToList();
         foreach (var further in clauses.Skip(1))
@@ -96,7 +96,7 @@ internal sealed class ItemBinder(BindContext context, NameTable names, Expressio
         var seen = new HashSet<int>();
         foreach (var share in clauses[0].Shares)
         {
-            if (BindShare(item, share, clauses[0].Shares.Count == 1) is not { } bound)
+            if (BindShare(item, share, scope, clauses[0].Shares.Count == 1) is not { } bound)
             {
                 isWhole = false;
             }
@@ -114,7 +114,7 @@ internal sealed class ItemBinder(BindContext context, NameTable names, Expressio
         return isWhole ? start : null;
     }
 
-    private (int State, NumberExpr Value)? BindShare(ItemSymbol item, StateShareSyntax share, bool isOnly)
+    private (int State, NumberExpr Value)? BindShare(ItemSymbol item, StateShareSyntax share, ExprScope scope, bool isOnly)
     {
         var state = effects.StateOf(item, share.State);
         if (share.Share is null)
@@ -129,7 +129,7 @@ internal sealed class ItemBinder(BindContext context, NameTable names, Expressio
         }
 
         var place = $"the start of item '{item.Name.Text}'";
-        var value = expressions.BindQuantity(share.Share, ExprScope.Fixed(place), Dimension.Plain, place);
+        var value = expressions.BindQuantity(share.Share, scope.AsFixed(place), Dimension.Plain, place);
         return state is { } one && value is not null ? (one, value.Expr) : null;
     }
 }

@@ -32,7 +32,7 @@ internal sealed class MoveBinder(BindContext context, NameTable names, Expressio
         var targets = effects.BindTargets(item, syntax.Targets, scope);
         var rate = BindRate(syntax, scope, arrow);
         var when = syntax.When is null ? null : expressions.BindCondition(syntax.When, scope, "'when'");
-        var service = BindService(syntax);
+        var service = BindService(syntax, scope);
         var further = effects.Bind(syntax.Effects, scope);
         if (from is not { } left || targets is null || rate is null || service is null || further is null
             || (when is null && syntax.When is not null))
@@ -66,7 +66,7 @@ internal sealed class MoveBinder(BindContext context, NameTable names, Expressio
             : null;
     }
 
-    private (CrewSymbol? Crew, double Rank)? BindService(MoveSyntax syntax)
+    private (CrewSymbol? Crew, double Rank)? BindService(MoveSyntax syntax, ExprScope scope)
     {
         if (syntax.Crew is not { } name)
         {
@@ -92,10 +92,10 @@ internal sealed class MoveBinder(BindContext context, NameTable names, Expressio
             return null;
         }
 
-        return BindRank(syntax, crew) is { } rank ? (crew, rank) : null;
+        return BindRank(syntax, crew, scope) is { } rank ? (crew, rank) : null;
     }
 
-    private double? BindRank(MoveSyntax syntax, CrewSymbol crew)
+    private double? BindRank(MoveSyntax syntax, CrewSymbol crew, ExprScope scope)
     {
         if (syntax.Rank is null)
         {
@@ -114,7 +114,7 @@ internal sealed class MoveBinder(BindContext context, NameTable names, Expressio
             return null;
         }
 
-        var rank = expressions.BindQuantity(syntax.Rank, ExprScope.Fixed("a rank"), Dimension.Plain, "a rank");
+        var rank = expressions.BindQuantity(syntax.Rank, scope.AsFixed("a rank"), Dimension.Plain, "a rank");
         if (rank is null)
         {
             return null;

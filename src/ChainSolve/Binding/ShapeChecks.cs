@@ -1,3 +1,4 @@
+using ChainSolve.Expressions;
 using ChainSolve.Modelling;
 
 namespace ChainSolve.Binding;
@@ -55,7 +56,7 @@ internal sealed class ShapeChecks(double[] givens)
     /// <summary>What is wrong with a draw whose probabilities do not read the state; null where nothing is.</summary>
     public Fault? Check(MoveEffect draw)
     {
-        if (draw.Targets.Count == 1 || ExprReads.AnyReadsState(draw.Targets.Select(t => t.Probability!)))
+        if (draw.Targets.Count == 1 || ExprReads.Of(draw.Targets.Select(t => t.Probability!)).Variables.Count > 0)
         {
             return null;
         }

@@ -11,14 +11,14 @@ internal static class StateShape
     {
         var shapes = items.SelectMany(i => i.Start.Append(i.Count))
             .Concat(counters.SelectMany(c => new Expr[] { c.Low, c.High, c.Start }));
-        var shaping = ExprReads.Givens(shapes);
+        var shaping = new HashSet<int>(ExprReads.Of(shapes).Givens);
 
         // A given follows only those above it, so one pass from below is enough.
         for (var i = givens.Count - 1; i >= 0; i--)
         {
             if (shaping.Contains(i))
             {
-                shaping.UnionWith(ExprReads.Givens([givens[i].Default]));
+                shaping.UnionWith(ExprReads.Of([givens[i].Default]).Givens);
             }
         }
 

@@ -53,7 +53,9 @@ internal static class Bound
     public static double ValueAt(BoundModel model, Expr expr, int[] marking)
     {
         var givens = new GivenResolver(model).Defaults().Values!.AsSpan();
-        return ExprValue.Of(expr, marking, givens);
+        var outputs = new double[1];
+        ExprCompiler.Compile([expr]).Run(marking, givens, outputs);
+        return outputs[0];
     }
 
     public static BoundTransition Transition(BoundModel model, string label) =>

@@ -1,3 +1,7 @@
+using ChainSolve.Binding;
+using ChainSolve.Language.Syntax;
+using ChainSolve.Modelling;
+
 namespace ChainSolve.Tests.Binding;
 
 public sealed class DimensionTests
@@ -45,6 +49,7 @@ public sealed class DimensionTests
     [InlineData("count(9 h > 3)", "B230 these cannot be compared: '9 h' is a time and '3' is a plain number; write its unit, such as 3 h")]
     [InlineData("max(9 h, 2 * 3)", "B230 the arguments of 'max' have one dimension: '9 h' is a time and '2 * 3' is a plain number; a unit such as 'h' is missing")]
     [InlineData("if 1 = 1 then 9 h else (2 h)^2", "B230 both branches of an 'if' have one dimension: '9 h' is a time and '(2 h)^2' is a time^2")]
+    [InlineData("3 h + compressor.run", "B230 these cannot be added or subtracted: '3 h' is a time and 'compressor.run' is a plain number")]
     [InlineData("exp(3 h)", "B231 'exp' needs a plain number; '3 h' is a time")]
     [InlineData("2^(3 h)", "B231 the exponent needs a plain number; '(3 h)' is a time")]
     [InlineData("(3 h)^0.5", "B235 '(3 h)' is a time; its power needs a written whole number, or divide by a unit first")]
@@ -128,6 +133,10 @@ public sealed class DimensionTests
         Assert.Equal(
             ["2:10 B234 no number of this file has a unit, so results have none either; give the times and rates their units or leave out 'timebase d'"],
             Bound.Faults("item fan { on -> off at 2 ; off -> on at 3 }\ntimebase d"));
+
+    [Fact]
+    public void Bind_EveryUnitOfTheNotation_HasItsScale() =>
+        Assert.All(UnitWords.All, unit => Assert.NotNull(UnitScale.Of(unit, TimeBase.Hour)));
 
     [Fact]
     public void Bind_PerFailures_IsAFault() =>

@@ -89,6 +89,12 @@ public sealed class EffectTests
         Assert.Equal([message], Bound.Faults($"{Store}event storm at 1 per y {{ {line} }}"));
 
     [Fact]
+    public void Bind_TwoWrongLines_AreTwoFaults() =>
+        Assert.Equal(
+            ["3:26 B204 unknown counter 'seal'; nearest: 'seals'", "3:49 B206 item 'compressor' has no state 'rin'; it has run, broken; nearest: 'run'"],
+            Bound.Faults(Store + "event storm at 1 per y { seal = 1 ; compressor: rin -> broken }"));
+
+    [Fact]
     public void Bind_TransitionsStand_InTheOrderOfTheText() =>
         Assert.Equal(
             ["event a", "move on -> off of fan", "event b"],

@@ -83,6 +83,20 @@ public sealed class ItemTests
             Bound.Faults("item fan x 3 { start on, off 1 ; on -> off at 2 per y }\nitem big { start on, off 1 ; on -> off at 2 per y }"));
 
     [Fact]
+    public void Bind_StartFromALocal_IsThatOfTheItem()
+    {
+        var model = Bound.Model("item a (s = 0.9), b (s = 50 %) { start on s, off 1 - s ; on -> off at 2 per y ; off -> on at 1/9 h }");
+
+        Assert.Equal([0.9, 0.5], model.Items.Select(i => Bound.Value(model, i.Start[0])));
+    }
+
+    [Fact]
+    public void Bind_StartOfTheState_IsAFault() =>
+        Assert.Equal(
+            ["1:34 B212 's' depends on the state; the start of item 'a' may use numbers and givens only"],
+            Bound.Faults("item a x 3 (s = a.on) { start on s, off 1 ; on -> off at 2 per y }"));
+
+    [Fact]
     public void Bind_StartInAnUnknownState_IsAFault() =>
         Assert.Equal(
             ["1:18 B206 item 'fan' has no state 'onn'; it has on, off; nearest: 'on'"],
