@@ -1,0 +1,74 @@
+using ChainSolve.Modelling;
+using ChainSolve.Language.Diagnostics;
+using ChainSolve.Language.Text;
+using ChainSolve.Numerics.Iteration;
+using ChainSolve.Numerics.Operators;
+using ChainSolve.StateSpace;
+
+namespace ChainSolve.Generators;
+
+/// <summary>Makes a Markov chain of a model whose givens are set.</summary>
+internal static class ChainBuilder
+{
+    private const int WidestKey = 128;
+
+    /// <summary>Explores the model and fills its generator.</summary>
+    /// <exception cref="ModelFaultsException">A state shows a fault.</exception>
+    /// <exception cref="LimitExceededException">There are more states than the limit.</exception>
+    public static ExploredChain Build(BoundModel model, GivenValues givens, ExploreOptions options, SolveContext context)
+    {
+        var layout = StateLayout.Of(model, givens);
+        if (layout.Bits > WidestKey)
+        {
+            throw new ModelFaultsException([new Diagnostic(
+                StateCodes.KeyTooWide,
+                Severity.Fault,
+                $"a state of this model takes {layout.Bits} bits, and {WidestKey} is the most that is kept; write alike items as one item with 'x N', or narrow the ranges of counters",
+                new TextSpan(0, 0),
+                model.Source)]);
+        }
+
+        var finder = new SuccessorFinder(model, givens, layout, SuccessorFinder.RateProgram(model, options.BackEnd));
+        var starts = StartMarkings.Of(model, givens);
+        var states = layout.Bits <= 64
+            ? new Explorer<ulong>(model, layout, finder).Explore(starts, options.MaxStates, context)
+            : new Explorer<UInt128>(model, layout, finder).Explore(starts, options.MaxStates, context);
+        var rows = GeneratorRows.Fill(states, finder, model.Variables.Count, model.Transitions.Count, context)
+            ?? throw new InvalidOperationException("A state leads to one that was not explored.");
+        var generator = Generator.FromRows(rows.Offsets, rows.Targets, rows.Rates);
+        return new ExploredChain(model, givens, options, states, rows, generator, isRefilled: false);
+    }
+
+    /// <summary>
+    /// The chain of the same model for other values of its givens: the same states with new rates where no given that shapes them changed and
+    /// the same transitions are possible, explored anew otherwise. Both ways give the same chain, digit for digit.
+    /// </summary>
+    public static ExploredChain Rebuild(ExploredChain chain, GivenValues givens, ExploreOptions options, SolveContext context) =>
+        Refill(chain, givens, options, context) ?? Build(chain.Model, givens, options, context);
+
+    private static ExploredChain? Refill(ExploredChain chain, GivenValues givens, ExploreOptions options, SolveContext context)
+    {
+        var model = chain.Model;
+        for (var i = 0; i < model.Givens.Count; i++)
+        {
+            if (model.Givens[i].ShapesStates && givens[i] != chain.Givens[i])
+            {
+                return null;
+            }
+        }
+
+        var finder = new SuccessorFinder(model, givens, StateLayout.Of(model, givens), SuccessorFinder.RateProgram(model, options.BackEnd));
+        try
+        {
+            var rows = GeneratorRows.Fill(chain.States, finder, model.Variables.Count, model.Transitions.Count, context);
+            return rows is not null && rows.HasPatternOf(chain.Rows)
+                ? new ExploredChain(model, givens, options, chain.States, rows with { Offsets = chain.Rows.Offsets, Targets = chain.Rows.Targets }, chain.Generator.WithRates(rows.Rates), isRefilled: true)
+                : null;
+        }
+        catch (StateFaultException)
+        {
+            // Exploring tells the fault with the way to it, or does not meet it at all.
+            return null;
+        }
+    }
+}

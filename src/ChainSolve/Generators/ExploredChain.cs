@@ -1,0 +1,100 @@
+using System.Globalization;
+using ChainSolve.Expressions;
+using ChainSolve.Language.Diagnostics;
+using ChainSolve.Language.Text;
+using ChainSolve.Modelling;
+using ChainSolve.Numerics.Operators;
+using ChainSolve.StateSpace;
+
+namespace ChainSolve.Generators;
+
+/// <summary>A chain whose states were explored.</summary>
+internal sealed class ExploredChain : Chain
+{
+    private const int StatesBetweenLooks = 4096;
+
+    private readonly ExploreOptions options;
+
+    public ExploredChain(
+        BoundModel model, GivenValues givens, ExploreOptions options, StateTable states, GeneratorRows rows, Generator generator, bool isRefilled)
+    {
+        (Model, Givens, States, Rows, Generator, IsRefilled, this.options) = (model, givens, states, rows, generator, isRefilled, options);
+        Start = new double[states.Count];
+        foreach (var (marking, probability) in StartMarkings.Of(model, givens))
+        {
+            Start[states.Find(marking)] += probability;
+        }
+
+        Warnings = ChainWarnings.Of(this, rows.Happens);
+    }
+
+    public override BoundModel Model { get; }
+
+    public override GivenValues Givens { get; }
+
+    public override StateTable States { get; }
+
+    public override Generator Generator { get; }
+
+    public override double[] Start { get; }
+
+    public override IReadOnlyList<Diagnostic> Warnings { get; }
+
+    /// <summary>The rows that the generator was made of.</summary>
+    public GeneratorRows Rows { get; }
+
+    /// <summary>Whether the states of another chain were taken over.</summary>
+    public bool IsRefilled { get; }
+
+    public override double[] Evaluate(NumberExpr expression, CancellationToken cancellation)
+    {
+        var values = new double[States.Count];
+        ForEach(expression, cancellation, (state, value) =>
+        {
+            if (!double.IsFinite(value))
+            {
+                throw new ModelFaultsException([new Diagnostic(
+                    StateCodes.Value,
+                    Severity.Fault,
+                    string.Create(CultureInfo.InvariantCulture, $"a value that a measure needs is {value} in the state '{Describe(state)}'; a value is finite: look for a division by zero"),
+                    new TextSpan(0, 0),
+                    Model.Source)]);
+            }
+
+            values[state] = value;
+        });
+        return values;
+    }
+
+    public override bool[] Evaluate(ConditionExpr condition, CancellationToken cancellation)
+    {
+        var truths = new bool[States.Count];
+        ForEach(condition, cancellation, (state, value) => truths[state] = value != 0);
+        return truths;
+    }
+
+    public override string Describe(int state)
+    {
+        var marking = new int[Model.Variables.Count];
+        States.ReadMarking(state, marking);
+        return StateWords.Describe(Model, marking);
+    }
+
+    private void ForEach(Expr expression, CancellationToken cancellation, Action<int, double> take)
+    {
+        var program = ExprCompiler.Compile([expression], States.Count < StatesBetweenLooks ? ExprBackEnd.Interpreted : options.BackEnd);
+        var marking = new int[Model.Variables.Count];
+        Span<double> value = stackalloc double[1];
+        for (var state = 0; state < States.Count; state++)
+        {
+            if (state % StatesBetweenLooks == 0)
+            {
+                cancellation.ThrowIfCancellationRequested();
+            }
+
+            States.ReadMarking(state, marking);
+            program.Run(marking, Givens.AsSpan(), value);
+            take(state, value[0]);
+        }
+    }
+}

@@ -1,0 +1,201 @@
+using System.Globalization;
+using ChainSolve.Modelling;
+
+namespace ChainSolve.StateSpace;
+
+/// <summary>Applies the effects of a transition to a marking. Holds buffers: belongs to one thread.</summary>
+internal sealed class EffectRunner(BoundModel model, StateLayout layout, double[] givens, SuccessorList successors)
+{
+    private const double WholeSlack = 1e-9;
+    private const double SumSlack = 1e-9;
+
+    private readonly int[] after = new int[model.Variables.Count];
+    private readonly int[] left = new int[model.Variables.Count];
+    private readonly Dictionary<int, CounterRange> ranges = layout.Counters.ToDictionary(c => c.Variable);
+    private double[] outputs = [];
+
+    /// <summary>Adds the successors that the transition leads to.</summary>
+    public void Run(EffectPlan plan, int transition, double rate, ReadOnlySpan<int> before)
+    {
+        if (plan.Program is { } program)
+        {
+            outputs = outputs.Length >= program.OutputCount ? outputs : new double[program.OutputCount];
+            program.Run(before, givens, outputs);
+        }
+
+        before.CopyTo(after);
+        Assign(plan);
+        if (plan.Moves.Length == 0)
+        {
+            successors.Add(after, rate, transition);
+            return;
+        }
+
+        Span<int> counts = plan.Moves.Length <= 32 ? stackalloc int[plan.Moves.Length] : new int[plan.Moves.Length];
+        CountMoving(plan, before, counts);
+        for (var m = 0; m < counts.Length; m++)
+        {
+            after[plan.Moves[m].Effect.From] -= counts[m];
+        }
+
+        if (!plan.IsPlain)
+        {
+            Draw(plan, counts.ToArray(), 0, transition, rate);
+            return;
+        }
+
+        for (var m = 0; m < counts.Length; m++)
+        {
+            after[plan.Moves[m].Targets[0].To] += counts[m];
+        }
+
+        successors.Add(after, rate, transition);
+    }
+
+    private void Assign(EffectPlan plan)
+    {
+        foreach (var (variable, amount) in plan.Assignments)
+        {
+            var value = amount.Read(outputs);
+            var name = model.Variables[variable].Name;
+            if (!double.IsFinite(value) || Math.Abs(value - Math.Round(value)) > WholeSlack)
+            {
+                throw Fault(plan, StateCodes.CounterNotWhole, $"{plan.Transition.Label} would set {name} to {value}, which is not a whole number");
+            }
+
+            var range = ranges[variable];
+            var whole = Math.Round(value);
+            if (whole < range.Low || whole > range.High)
+            {
+                throw Fault(plan, StateCodes.CounterRange, $"{plan.Transition.Label} would set {name} to {whole}, outside its range {range.Low} .. {range.High}; let it wait with 'when', or widen the range");
+            }
+
+            after[variable] = (int)whole;
+        }
+    }
+
+    private void CountMoving(EffectPlan plan, ReadOnlySpan<int> before, Span<int> counts)
+    {
+        foreach (var move in plan.Moves)
+        {
+            left[move.Effect.From] = before[move.Effect.From];
+        }
+
+        for (var m = 0; m < counts.Length; m++)
+        {
+            var move = plan.Moves[m];
+            counts[m] = 0;
+            if (move.Count is not { } amount)
+            {
+                continue;
+            }
+
+            var wanted = amount.Read(outputs);
+            if (!(wanted >= -WholeSlack) || Math.Abs(wanted - Math.Round(wanted)) > WholeSlack)
+            {
+                throw Fault(plan, StateCodes.MoveCount, $"{plan.Transition.Label} would move {wanted} replicas out of {NameOf(move)}; the number is whole and not negative");
+            }
+
+            if (Math.Round(wanted) <= left[move.Effect.From])
+            {
+                counts[m] = (int)Math.Round(wanted);
+                left[move.Effect.From] -= counts[m];
+            }
+            else if (!move.Effect.IfAny)
+            {
+                throw Fault(plan, StateCodes.TooFew, $"{plan.Transition.Label} needs {Math.Round(wanted)} in {NameOf(move)}, where {left[move.Effect.From]} are left; let it wait with 'when', or skip the line with 'if any'");
+            }
+        }
+
+        for (var m = 0; m < counts.Length; m++)
+        {
+            if (plan.Moves[m].Count is null)
+            {
+                counts[m] = left[plan.Moves[m].Effect.From];
+                left[plan.Moves[m].Effect.From] = 0;
+            }
+        }
+    }
+
+    // Every line draws on its own; the replicas of a line are alike, so only how many go where counts.
+    private void Draw(EffectPlan plan, int[] counts, int line, int transition, double rate)
+    {
+        if (line == plan.Moves.Length)
+        {
+            successors.Add(after, rate, transition);
+            return;
+        }
+
+        var move = plan.Moves[line];
+        if (move.Targets.Length == 1 || counts[line] == 0)
+        {
+            after[move.Targets[0].To] += counts[line];
+            Draw(plan, counts, line + 1, transition, rate);
+            after[move.Targets[0].To] -= counts[line];
+            return;
+        }
+
+        var chances = ChancesOf(plan, move);
+        Share(0, counts[line], rate);
+
+        void Share(int target, int remaining, double weight)
+        {
+            if (target == chances.Length - 1 || remaining == 0)
+            {
+                weight *= Math.Pow(chances[target], remaining);
+                if (weight > 0)
+                {
+                    after[move.Targets[target].To] += remaining;
+                    Draw(plan, counts, line + 1, transition, weight);
+                    after[move.Targets[target].To] -= remaining;
+                }
+
+                return;
+            }
+
+            for (var taken = 0; taken <= remaining; taken++)
+            {
+                var chance = Expressions.ScalarMath.Choose(remaining, taken) * Math.Pow(chances[target], taken);
+                if (chance > 0)
+                {
+                    after[move.Targets[target].To] += taken;
+                    Share(target + 1, remaining - taken, weight * chance);
+                    after[move.Targets[target].To] -= taken;
+                }
+            }
+        }
+    }
+
+    private double[] ChancesOf(EffectPlan plan, MovePlan move)
+    {
+        var chances = new double[move.Targets.Length];
+        var sum = 0.0;
+        for (var i = 0; i < chances.Length; i++)
+        {
+            chances[i] = move.Targets[i].Probability.Read(outputs);
+            if (!(chances[i] >= 0))
+            {
+                throw Fault(plan, StateCodes.Probability, $"{plan.Transition.Label} would go to {model.Variables[move.Targets[i].To].Name} with the probability {chances[i]}; a probability is not negative");
+            }
+
+            sum += chances[i];
+        }
+
+        if (!(Math.Abs(sum - 1) <= SumSlack))
+        {
+            throw Fault(plan, StateCodes.Probability, $"the probabilities of the targets of {plan.Transition.Label} add to {sum}, not to 1");
+        }
+
+        for (var i = 0; i < chances.Length; i++)
+        {
+            chances[i] /= sum;
+        }
+
+        return chances;
+    }
+
+    private string NameOf(MovePlan move) => model.Variables[move.Effect.From].Name;
+
+    private static StateFaultException Fault(EffectPlan plan, string code, FormattableString message) =>
+        new(code, plan.Transition, message.ToString(CultureInfo.InvariantCulture));
+}

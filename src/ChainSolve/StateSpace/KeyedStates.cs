@@ -1,0 +1,14 @@
+using System.Numerics;
+
+namespace ChainSolve.StateSpace;
+
+/// <summary>States as sorted keys.</summary>
+internal sealed class KeyedStates<TKey>(KeyCodec<TKey> codec, KeyTable<TKey> table) : StateTable
+    where TKey : unmanaged, IBinaryInteger<TKey>
+{
+    public override int Count => table.Count;
+
+    public override void ReadMarking(int state, Span<int> marking) => codec.Unpack(table[state], marking);
+
+    public override int Find(ReadOnlySpan<int> marking) => table.IndexOf(codec.Pack(marking));
+}

@@ -1,0 +1,60 @@
+using ChainSolve.Binding;
+using ChainSolve.Modelling;
+
+namespace ChainSolve.StateSpace;
+
+/// <summary>The markings in which a model may start, with their probabilities: items whose start is drawn are drawn independently.</summary>
+internal static class StartMarkings
+{
+    public static IReadOnlyList<(int[] Marking, double Probability)> Of(BoundModel model, GivenValues givens)
+    {
+        var values = givens.AsSpan().ToArray();
+        var starts = new List<(int[] Marking, double Probability)> { (new int[model.Variables.Count], 1) };
+        foreach (var item in model.Items)
+        {
+            var shares = item.Start.Select(s => GivenEvaluator.ValueOf(s, values)).ToArray();
+            starts = item.StartIsDrawn ? Drawn(starts, item, shares) : Placed(starts, item, shares);
+        }
+
+        foreach (var counter in model.Counters)
+        {
+            var start = (int)Math.Round(GivenEvaluator.ValueOf(counter.Start, values));
+            starts.ForEach(s => s.Marking[counter.Variable] = start);
+        }
+
+        return starts;
+    }
+
+    private static List<(int[] Marking, double Probability)> Placed(List<(int[] Marking, double Probability)> starts, BoundItem item, double[] counts)
+    {
+        foreach (var (marking, _) in starts)
+        {
+            for (var s = 0; s < counts.Length; s++)
+            {
+                marking[item.FirstVariable + s] = (int)Math.Round(counts[s]);
+            }
+        }
+
+        return starts;
+    }
+
+    private static List<(int[] Marking, double Probability)> Drawn(List<(int[] Marking, double Probability)> starts, BoundItem item, double[] chances)
+    {
+        var sum = chances.Sum();
+        var drawn = new List<(int[] Marking, double Probability)>();
+        foreach (var (marking, probability) in starts)
+        {
+            for (var s = 0; s < chances.Length; s++)
+            {
+                if (chances[s] > 0)
+                {
+                    var copy = (int[])marking.Clone();
+                    copy[item.FirstVariable + s] = 1;
+                    drawn.Add((copy, probability * (chances[s] / sum)));
+                }
+            }
+        }
+
+        return drawn;
+    }
+}

@@ -1,0 +1,57 @@
+using System.Globalization;
+using ChainSolve.Expressions;
+using ChainSolve.Modelling;
+
+namespace ChainSolve.StateSpace;
+
+/// <summary>Finds what can happen in a state and where it leads. Holds buffers: belongs to one thread.</summary>
+internal sealed class SuccessorFinder
+{
+    private readonly BoundModel model;
+    private readonly double[] givens;
+    private readonly IExprProgram rateProgram;
+    private readonly EffectPlan[] plans;
+    private readonly double[] rates;
+    private readonly EffectRunner runner;
+
+    public SuccessorFinder(BoundModel model, GivenValues givens, StateLayout layout, IExprProgram rateProgram)
+    {
+        this.model = model;
+        this.givens = givens.AsSpan().ToArray();
+        this.rateProgram = rateProgram;
+        plans = [.. model.Transitions.Select(t => new EffectPlan(t))];
+        rates = new double[model.Transitions.Count];
+        Successors = new SuccessorList(model.Variables.Count);
+        runner = new EffectRunner(model, layout, this.givens, Successors);
+    }
+
+    public SuccessorList Successors { get; }
+
+    /// <summary>The rates of all transitions: 0 where the guard does not hold.</summary>
+    public static IExprProgram RateProgram(BoundModel model, ExprBackEnd backEnd) => ExprCompiler.Compile(
+        [.. model.Transitions.Select(t => t.Guard is null ? t.Rate : new ChooseNumberExpr(t.Guard, t.Rate, new ConstantExpr(0)))], backEnd);
+
+    /// <summary>Fills <see cref="Successors"/>; those that lead back to the same state are among them.</summary>
+    /// <exception cref="StateFaultException">Something that is enabled in the state is not possible.</exception>
+    public void Find(ReadOnlySpan<int> marking)
+    {
+        Successors.Clear();
+        rateProgram.Run(marking, givens, rates);
+        for (var t = 0; t < rates.Length; t++)
+        {
+            var rate = rates[t];
+            if (rate == 0)
+            {
+                continue;
+            }
+
+            if (!(rate > 0) || double.IsInfinity(rate))
+            {
+                throw new StateFaultException(StateCodes.Rate, model.Transitions[t], string.Create(
+                    CultureInfo.InvariantCulture, $"the rate of {model.Transitions[t].Label} is {rate}; a rate is finite and not negative"));
+            }
+
+            runner.Run(plans[t], t, rate, marking);
+        }
+    }
+}
