@@ -49,7 +49,7 @@ internal sealed class ExploredChain : Chain
     public override double[] Evaluate(NumberExpr expression, CancellationToken cancellation)
     {
         var values = new double[States.Count];
-        ForEach(expression, cancellation, (state, value) =>
+        ForEach(expression, (state, value) =>
         {
             if (!double.IsFinite(value))
             {
@@ -62,14 +62,14 @@ internal sealed class ExploredChain : Chain
             }
 
             values[state] = value;
-        });
+        }, cancellation);
         return values;
     }
 
     public override bool[] Evaluate(ConditionExpr condition, CancellationToken cancellation)
     {
         var truths = new bool[States.Count];
-        ForEach(condition, cancellation, (state, value) => truths[state] = value != 0);
+        ForEach(condition, (state, value) => truths[state] = value != 0, cancellation);
         return truths;
     }
 
@@ -80,7 +80,7 @@ internal sealed class ExploredChain : Chain
         return StateWords.Describe(Model, marking);
     }
 
-    private void ForEach(Expr expression, CancellationToken cancellation, Action<int, double> take)
+    private void ForEach(Expr expression, Action<int, double> take, CancellationToken cancellation)
     {
         var program = ExprCompiler.Compile([expression], States.Count < StatesBetweenLooks ? ExprBackEnd.Interpreted : options.BackEnd);
         var marking = new int[Model.Variables.Count];
