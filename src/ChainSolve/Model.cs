@@ -31,8 +31,9 @@ public sealed partial class Model
     private readonly ChainHolder chains;
     private readonly IReadOnlyList<GivenSetting> settings;
 
-    internal Model(BoundModel bound, GivenValues givens, ChainHolder chains, IReadOnlyList<GivenSetting> settings)
+    internal Model(BoundModel bound, GivenValues givens, ChainHolder chains, IReadOnlyList<GivenSetting> settings, IReadOnlyList<string> settingNotes)
     {
+        SettingNotes = settingNotes;
         (this.bound, this.givens, this.chains, this.settings) = (bound, givens, chains, settings);
         Givens = [.. bound.Givens.Select((g, i) => GivenView.Of(g, givens[i], bound.TimeBase))];
         Measures = [.. bound.Measures.Select(m => new MeasureInfo(m.Name, MeasureWords.Of(m.Kind), m.Sentence, m.Unit, m.Times.Count > 0))];
@@ -49,6 +50,9 @@ public sealed partial class Model
 
     /// <summary>The inputs with their values, in the order of the text.</summary>
     public IReadOnlyList<GivenInfo> Givens { get; }
+
+    /// <summary>For each value that was set without a unit how it was read, such as <c>mttr = 12 h</c>.</summary>
+    public IReadOnlyList<string> SettingNotes { get; }
 
     /// <summary>What the model asks for, in the order of the text.</summary>
     public IReadOnlyList<MeasureInfo> Measures { get; }

@@ -21,7 +21,7 @@ internal sealed class HandModel
             Interlocked.Increment(ref builds);
             return build(last, cancellation);
         });
-        Model = new Model(chain.Model with { Measures = measures }, chain.Givens, holder, []);
+        Model = new Model(chain.Model with { Measures = measures }, chain.Givens, holder, [], []);
     }
 
     public Model Model { get; }
