@@ -2,4 +2,5 @@ using ChainSolve.Cli.Commands;
 using ChainSolve.Cli.Terminal;
 
 using var signals = new SignalWatch();
-return await CommandRunner.RunAsync(args, ProcessStreams.OfThisProcess(), signals);
+var streams = ProcessStreams.OfThisProcess();
+return await CommandRunner.RunAsync(CommandTree.Build(streams), args, streams, signals);

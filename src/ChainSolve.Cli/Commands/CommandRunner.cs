@@ -11,15 +11,16 @@ internal static class CommandRunner
     private static readonly ParserConfiguration Parsing = new() { ResponseFileTokenReplacer = null };
 
     /// <summary>Runs a command.</summary>
+    /// <param name="root">All commands.</param>
     /// <param name="words">The words behind the name of the program.</param>
     /// <param name="streams">What it reads and writes.</param>
     /// <param name="signals">Tells when the process is to stop.</param>
     /// <returns>The exit code.</returns>
-    public static async Task<int> RunAsync(string[] words, ProcessStreams streams, SignalWatch signals)
+    public static async Task<int> RunAsync(RootCommand root, string[] words, ProcessStreams streams, SignalWatch signals)
     {
         try
         {
-            var parsed = CommandTree.Build(streams).Parse(words, Parsing);
+            var parsed = root.Parse(words, Parsing);
             if (UsageMessages.Describe(parsed) is { } message)
             {
                 throw new UsageException(message);

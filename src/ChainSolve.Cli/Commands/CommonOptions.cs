@@ -65,6 +65,7 @@ internal sealed class CommonOptions
         Threads = parsed.GetValue(threads) is { } w ? (int)ValueReader.Whole("--threads", w, 1, 1024) : null,
         MaxStates = parsed.GetValue(maxStates) is { } m ? ValueReader.Whole("--max-states", m, 1, int.MaxValue) : null,
         TimeLimit = parsed.GetValue(timeLimit) is { } limit ? ValueReader.Duration("--time-limit", limit) : null,
+        TimeLimitText = parsed.GetValue(timeLimit),
         Format = parsed.GetValue(format) is { } f ? ValueReader.OneOf("--format", f, formats) : formats[0],
         Output = parsed.GetValue(output),
         IsQuiet = parsed.GetValue(quiet),

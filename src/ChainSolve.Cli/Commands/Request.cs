@@ -22,6 +22,9 @@ internal sealed record Request
 
     public required TimeSpan? TimeLimit { get; init; }
 
+    /// <summary>The time limit as it was written.</summary>
+    public required string? TimeLimitText { get; init; }
+
     public required string Format { get; init; }
 
     /// <summary>The file for the answer; null for standard output.</summary>

@@ -34,6 +34,8 @@ internal static class UsageMessages
             {
                 case OptionResult option when option.Tokens.Count > 1:
                     return $"'{option.Option.Name}' is given more than once";
+                case OptionResult { Implicit: true } option:
+                    return $"'{option.Option.Name}' is missing: chainsolve {command.Name} FILE {option.Option.Name} {option.Option.HelpName}";
                 case OptionResult option when option.Option.HelpName is null:
                     return $"'{option.Option.Name}' takes no value";
                 case OptionResult option:

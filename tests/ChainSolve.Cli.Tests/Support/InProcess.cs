@@ -1,3 +1,4 @@
+using System.CommandLine;
 using System.Text;
 using ChainSolve.Cli.Commands;
 using ChainSolve.Cli.Terminal;
@@ -9,7 +10,11 @@ internal static class InProcess
 {
     public static Task<Outcome> RunAsync(params string[] words) => RunAsync("", words);
 
-    public static async Task<Outcome> RunAsync(string input, string[] words, Dictionary<string, string>? environment = null)
+    public static Task<Outcome> RunAsync(string input, string[] words) => RunAsync(CommandTree.Build, input, words);
+
+    /// <summary>Runs a command of a tree of the caller's own.</summary>
+    public static async Task<Outcome> RunAsync(
+        Func<ProcessStreams, RootCommand> tree, string input, string[] words, Dictionary<string, string>? environment = null)
     {
         using var answer = new StringWriter();
         using var error = new StringWriter();
@@ -22,7 +27,7 @@ internal static class InProcess
             ErrorIsTerminal = false,
             Environment = name => environment?.GetValueOrDefault(name),
         };
-        var code = await CommandRunner.RunAsync(words, streams, signals);
+        var code = await CommandRunner.RunAsync(tree(streams), words, streams, signals);
         return new Outcome(code, answer.ToString().ReplaceLineEndings("\n"), error.ToString().ReplaceLineEndings("\n"));
     }
 }
