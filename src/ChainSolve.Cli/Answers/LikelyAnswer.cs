@@ -20,10 +20,6 @@ internal sealed record LikelyAnswer
     /// <summary>The states that are shown, the most likely first.</summary>
     public required IReadOnlyList<LikelyState> States { get; init; }
 
-    /// <summary>The most likely of all states, the most likely first; of equally likely ones the one with the lower number.</summary>
-    public static IReadOnlyList<int> Rank(IReadOnlyList<double> chances, int count) =>
-        [.. Enumerable.Range(0, chances.Count).OrderByDescending(i => chances[i]).ThenBy(i => i).Take(count)];
-
     /// <summary>Writes the answer as <c>text</c>, <c>json</c> or <c>csv</c>.</summary>
     public void Write(TextWriter writer, string format)
     {
@@ -47,11 +43,11 @@ internal sealed record LikelyAnswer
             ? $"at {time.ToString("R", CultureInfo.InvariantCulture)}{(Unit.Length > 0 ? " " + Unit : "")}"
             : "in the long run";
         writer.Write($"the most likely states {when}\n\n");
-        var cells = States.Select(s => EarnedDigits.Format(s.Probability, s.Bound, 8)).ToArray();
+        var cells = States.Select(s => EarnedDigits.Format(s.Probability, s.ErrorBound, 8)).ToArray();
         var width = cells.Length == 0 ? 0 : cells.Max(c => c.Length);
         for (var i = 0; i < cells.Length; i++)
         {
-            writer.Write($"  {cells[i].PadRight(width)}  {States[i].Name}\n");
+            writer.Write($"  {cells[i].PadRight(width)}  {States[i].Description}\n");
         }
 
         var rest = StateCount - States.Count;
@@ -71,7 +67,7 @@ internal sealed record LikelyAnswer
         foreach (var state in States)
         {
             var time = Time is { } t ? Csv.Number(t) : "steady";
-            writer.Write(Csv.Line([time, state.Name, Csv.Number(state.Probability), Csv.Number(state.Bound)]) + "\n");
+            writer.Write(Csv.Line([time, state.Description, Csv.Number(state.Probability), Csv.Number(state.ErrorBound)]) + "\n");
         }
     }
 
@@ -95,9 +91,9 @@ internal sealed record LikelyAnswer
         foreach (var state in States)
         {
             json.WriteStartObject();
-            json.WriteString("state", state.Name);
+            json.WriteString("state", state.Description);
             json.WriteNumber("probability", state.Probability);
-            json.WriteNumber("errorBound", state.Bound);
+            json.WriteNumber("errorBound", state.ErrorBound);
             json.WriteEndObject();
         }
 
@@ -105,9 +101,3 @@ internal sealed record LikelyAnswer
         json.WriteEndObject();
     });
 }
-
-/// <summary>A state and its chance.</summary>
-/// <param name="Name">The state in the model's own words.</param>
-/// <param name="Probability">The chance of being in it.</param>
-/// <param name="Bound">The absolute error bound of the chance.</param>
-internal sealed record LikelyState(string Name, double Probability, double Bound);

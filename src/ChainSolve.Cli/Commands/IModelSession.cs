@@ -12,6 +12,9 @@ internal interface IModelSession
     /// <summary>Warnings known so far; those about states are known once a method has explored them.</summary>
     IReadOnlyList<Diagnostic> Warnings { get; }
 
+    /// <summary>How values that were set without a unit were read, such as <c>mttr = 12 h</c>.</summary>
+    IReadOnlyList<string> Notes { get; }
+
     /// <summary>Sizes, classes and warnings.</summary>
     CommandAnswer Check(Work work);
 

@@ -1,5 +1,6 @@
 using ChainSolve.Cli.Terminal;
 using ChainSolve.Language.Diagnostics;
+using ChainSolve.Reports;
 
 namespace ChainSolve.Cli.Commands;
 
@@ -26,6 +27,11 @@ internal sealed class ModelCommand(ProcessStreams streams, Func<byte[], Request,
 
             if (!request.IsQuiet)
             {
+                foreach (var note in session.Notes)
+                {
+                    await streams.Error.WriteLineAsync($"set: {note}");
+                }
+
                 printer.Print(session.Warnings);
             }
 
@@ -43,7 +49,7 @@ internal sealed class ModelCommand(ProcessStreams streams, Func<byte[], Request,
         }
         catch (ModelFaultsException exception) when (request.Format == "json")
         {
-            new AnswerSink(streams, request.Output).Write(writer => Answers.FaultsDocument.Write(writer, request.File, exception.Faults));
+            new AnswerSink(streams, request.Output).Write(writer => Report.WriteFaults(exception.Faults, request.File, writer));
             await streams.Error.WriteLineAsync($"chainsolve: {CountOf(exception.Faults)}");
             return ExitCodes.ModelFaults;
         }

@@ -62,13 +62,13 @@ internal static class UsageMessages
         {
             var name = token.Split('=', 2)[0];
             var known = command.Options.Select(o => o.Name).ToArray();
-            return $"unknown option '{name}'{Suggestions.Hint(name, known)}";
+            return $"unknown option '{name}'{Hints.Nearest(name, known)}";
         }
 
         if (command is RootCommand)
         {
             var known = command.Subcommands.Select(c => c.Name).ToArray();
-            var hint = Suggestions.Hint(token, known);
+            var hint = Hints.Nearest(token, known);
             return $"unknown command '{token}'{(hint.Length > 0 ? hint : $"; known: {string.Join(", ", known)}")}";
         }
 

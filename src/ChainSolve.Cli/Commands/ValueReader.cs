@@ -82,6 +82,6 @@ internal static class ValueReader
             return text;
         }
 
-        throw new UsageException($"'{option}' does not know '{text}'; known: {string.Join(", ", known)}{Suggestions.Hint(text, known)}");
+        throw new UsageException($"'{option}' does not know '{text}'; known: {string.Join(", ", known)}{Hints.Nearest(text, known)}");
     }
 }

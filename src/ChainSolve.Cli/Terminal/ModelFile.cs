@@ -62,7 +62,7 @@ internal static class ModelFile
             }
 
             var names = Directory.EnumerateFiles(folder, "*.chain").Take(1000).Select(f => Path.GetFileName(f)!);
-            return Commands.Suggestions.Hint(Path.GetFileName(path), names);
+            return Commands.Hints.Nearest(Path.GetFileName(path), names);
         }
         catch (Exception exception) when (FileProblemException.IsFileTrouble(exception))
         {

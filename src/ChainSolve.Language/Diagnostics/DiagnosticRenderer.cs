@@ -9,13 +9,18 @@ public static class DiagnosticRenderer
 {
     private const int Widest = 120;
 
-    /// <summary>The diagnostic as three lines without a line end behind the last; tabs are shown as one blank.</summary>
+    /// <summary>The diagnostic as three lines without a line end behind the last, or one where there is no text to show; tabs are shown as one blank.</summary>
     public static string Render(Diagnostic diagnostic)
     {
         ArgumentNullException.ThrowIfNull(diagnostic);
         var (line, column) = diagnostic.Position;
-        var head = string.Create(CultureInfo.InvariantCulture, $"{diagnostic.Source.Name}:{line}:{column}  {diagnostic.Code}  {diagnostic.Message}");
+        var head = string.Create(CultureInfo.InvariantCulture, $"{diagnostic.Source.Name}:{line}:{column}  {diagnostic.Code}  {(diagnostic.Severity == Severity.Warning ? "warning: " : "")}{diagnostic.Message}");
         var text = diagnostic.Source.Line(line);
+        if (string.IsNullOrWhiteSpace(text))
+        {
+            return head;
+        }
+
         var lineStart = diagnostic.Source.StartOfLine(line);
         var from = Math.Min(diagnostic.Span.Start - lineStart, text.Length);
         var to = Math.Clamp(diagnostic.Span.End - lineStart, from, text.Length);

@@ -14,12 +14,6 @@ public class LikelyAnswerTests
     };
 
     [Fact]
-    public void Rank_EqualChances_KeepsTheOrderOfTheStates()
-    {
-        Assert.Equal([2, 0, 3], LikelyAnswer.Rank([0.2, 0.1, 0.5, 0.2], 3));
-    }
-
-    [Fact]
     public void Write_Text_ShowsChancesAndTheRest()
     {
         Assert.Equal(

@@ -10,6 +10,8 @@ internal sealed class FakeSession(Func<Work, CommandAnswer> answer) : IModelSess
 
     public IReadOnlyList<Diagnostic> Warnings { get; init; } = [];
 
+    public IReadOnlyList<string> Notes { get; init; } = [];
+
     /// <summary>What was asked, in order.</summary>
     public List<string> Asked { get; } = [];
 
