@@ -19,14 +19,16 @@ internal sealed class FaultPrinter(TextWriter writer, bool useColor)
 
     private void Print(Diagnostic diagnostic)
     {
-        var text = DiagnosticRenderer.Render(diagnostic);
+        var lines = DiagnosticRenderer.Render(diagnostic).Split('\n');
         if (useColor)
         {
-            var at = text.IndexOf(diagnostic.Code, diagnostic.Source.Name.Length, StringComparison.Ordinal);
             var color = diagnostic.Severity == Severity.Fault ? Red : Yellow;
-            text = $"{text[..at]}{color}{diagnostic.Code}{Plain}{text[(at + diagnostic.Code.Length)..]}";
+            var at = lines[0].IndexOf(diagnostic.Code, diagnostic.Source.Name.Length, StringComparison.Ordinal);
+            lines[0] = $"{lines[0][..at]}{color}{diagnostic.Code}{Plain}{lines[0][(at + diagnostic.Code.Length)..]}";
+            var carets = lines[^1].IndexOf('^', StringComparison.Ordinal);
+            lines[^1] = lines.Length == 3 ? $"{lines[^1][..carets]}{color}{lines[^1][carets..]}{Plain}" : lines[^1];
         }
 
-        writer.WriteLine(text.ReplaceLineEndings());
+        writer.WriteLine(string.Join(Environment.NewLine, lines));
     }
 }

@@ -1,9 +1,9 @@
 using System.Globalization;
 using System.Text;
 using ChainSolve.Language.Diagnostics;
+using Superpower.Model;
 using SourceText = ChainSolve.Language.Text.SourceText;
 using TextSpan = ChainSolve.Language.Text.TextSpan;
-using Superpower.Model;
 
 namespace ChainSolve.Language.Lexing;
 

@@ -31,6 +31,6 @@ internal sealed class GthAbsorptionSolver : IAbsorptionSolver
         return EliminationAnswers.Of(
             problem,
             chain => DenseElimination.Of(chain.Restriction.Generator, chain.ToEnd, context.Cancellation),
-            $"gth elimination of {count} states");
+            $"gth elimination of order {count}");
     }
 }

@@ -25,7 +25,7 @@ internal sealed class SparseGthAbsorptionSolver : IAbsorptionSolver
         EliminationAnswers.Of(
             problem,
             chain => SparseElimination.Of(chain.Restriction.Generator, chain.ToEnd, Order(problem, chain.Restriction), context),
-            $"sparse gth elimination of {problem.Alive.Count(a => a)} states");
+            $"sparse gth elimination of order {problem.Alive.Count(a => a)}");
 
     /// <summary>The order of the whole pattern, without the states that do not count: they can only take fill away.</summary>
     private static int[]? Order(AbsorptionProblem problem, Restriction part)

@@ -29,6 +29,6 @@ internal sealed class GthSolver : IStationarySolver
         }
 
         var elimination = DenseElimination.Of(generator, null, context.Cancellation);
-        return Normalised.Vector(elimination.Stationary(), elimination.RelativeBound, $"gth elimination of {generator.StateCount} states");
+        return Normalised.Vector(elimination.Stationary(), elimination.RelativeBound, $"gth elimination of order {generator.StateCount}");
     }
 }

@@ -21,6 +21,6 @@ internal sealed class SparseGthSolver : IStationarySolver
         return Normalised.Vector(
             elimination.Stationary(),
             elimination.RelativeBound,
-            $"sparse gth elimination of {generator.StateCount} states, {generator.Pattern.Order.Fill} entries a side");
+            $"sparse gth elimination of order {generator.StateCount}, {generator.Pattern.Order.Fill} entries a side");
     }
 }

@@ -43,11 +43,11 @@ internal sealed record TimeAnswer(Estimate[] Rates, Estimate[] Totals, double[]?
     /// <summary>The answers of several times as one result, in the order of the times.</summary>
     public static TransientResult Gather(
         IReadOnlyList<double> times, Dictionary<double, TimeAnswer> answers, bool wantsDistributions, string how) => new()
-    {
-        Rates = [.. times.Select(t => (Estimate[])answers[t].Rates.Clone())],
-        Totals = [.. times.Select(t => (Estimate[])answers[t].Totals.Clone())],
-        Distributions = wantsDistributions ? [.. times.Select(t => (double[])answers[t].Distribution!.Clone())] : null,
-        DistributionBounds = wantsDistributions ? [.. times.Select(t => (double[])answers[t].Bounds!.Clone())] : null,
-        How = how,
-    };
+        {
+            Rates = [.. times.Select(t => (Estimate[])answers[t].Rates.Clone())],
+            Totals = [.. times.Select(t => (Estimate[])answers[t].Totals.Clone())],
+            Distributions = wantsDistributions ? [.. times.Select(t => (double[])answers[t].Distribution!.Clone())] : null,
+            DistributionBounds = wantsDistributions ? [.. times.Select(t => (double[])answers[t].Bounds!.Clone())] : null,
+            How = how,
+        };
 }

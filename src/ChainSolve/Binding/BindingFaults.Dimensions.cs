@@ -10,13 +10,15 @@ internal static partial class BindingFaults
         new(
             BindingCodes.UnlikeDimensions,
             $"{action}: {first} is {firstIs.Describe()} and {second} is {secondIs.Describe()}{Mend(mend)}",
-            span) { LacksUnit = firstIs.IsPlain || secondIs.IsPlain };
+            span)
+        { LacksUnit = firstIs.IsPlain || secondIs.IsPlain };
 
     public static Fault WrongDimension(string place, Dimension needed, string text, Dimension found, TextSpan span, string? mend) =>
         new(
             BindingCodes.WrongDimension,
             $"{place} needs {needed.Describe()}; {text} is {found.Describe()}{Mend(mend)}",
-            span) { LacksUnit = found.IsPlain };
+            span)
+        { LacksUnit = found.IsPlain };
 
     public static Fault UnitsMissing(TextSpan span, int units, int bare) =>
         new(

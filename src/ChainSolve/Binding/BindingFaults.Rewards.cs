@@ -13,7 +13,8 @@ internal static partial class BindingFaults
         new(
             BindingCodes.RewardDimension,
             $"this line adds up to {total.Describe()}, but {SourceWords.Quote(source, before)} to {totalBefore.Describe()}; a rate times time has the dimension of what is earned each time",
-            span) { LacksUnit = total.IsPlain || totalBefore.IsPlain };
+            span)
+        { LacksUnit = total.IsPlain || totalBefore.IsPlain };
 
     public static Fault MeasureForm(MeasureSyntax measure, string kind, string forms) =>
         new(BindingCodes.MeasureForm, $"'{kind}' is written {forms}", measure.Name.Span);

@@ -28,6 +28,11 @@ internal static partial class BindingFaults
             Hint = () => member() is { } meant ? $"; meant is perhaps '{meant}'" : Nearest(name.Text, known)(),
         };
 
+    public static Fault SecondState(IsSyntax test, Identifier state, string word) => new(
+        TextCodes.IsForm.Code,
+        $"'{test.Owner.Text} is {test.Member.Text} {word} {state.Text}' is not read; write '{test.Owner.Text} is {test.Member.Text} {word} {test.Owner.Text} is {state.Text}'",
+        state.Span);
+
     public static Fault UnknownKind(Identifier name, string wanted, IEnumerable<string> known) =>
         new(BindingCodes.UnknownName, $"unknown {wanted} '{name.Text}'", name.Span) { Hint = Nearest(name.Text, known) };
 

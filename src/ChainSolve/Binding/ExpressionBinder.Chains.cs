@@ -21,8 +21,17 @@ internal sealed partial class ExpressionBinder
         var place = isAnd ? "'and'" : "'or'";
         var operands = new List<ConditionExpr>(syntax.Rest.Count + 1);
         var readsState = false;
+        ExpressionSyntax? before = null;
         foreach (var operand in syntax.Rest.Select(link => link.Operand).Prepend(syntax.First))
         {
+            var test = before as IsSyntax;
+            before = operand;
+            if (test is not null && operand is NameSyntax lone && IsSecondState(test, lone, scope))
+            {
+                context.Report(BindingFaults.SecondState(test, lone.Name, isAnd ? "and" : "or"));
+                continue;
+            }
+
             if (BindCondition(operand, scope, place) is { } truth)
             {
                 operands.Add(truth.Expr);
@@ -34,6 +43,13 @@ internal sealed partial class ExpressionBinder
             ? null
             : new Truth(isAnd ? ExprNodes.All(operands) : ExprNodes.Any(operands), readsState);
     }
+
+    // "P is a or b": the lone name is no condition of the model, but a state of the item.
+    private bool IsSecondState(IsSyntax test, NameSyntax lone, ExprScope scope) =>
+        scope.Locals?.ContainsKey(lone.Name.Text) != true
+        && names.Find(lone.Name.Text) is null
+        && names.Find(test.Owner.Text) is ItemSymbol item
+        && item.StateIndex(lone.Name.Text) >= 0;
 
     private Quantity? BindSum(ChainSyntax syntax, ExprScope scope)
     {

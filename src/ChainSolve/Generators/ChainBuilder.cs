@@ -1,6 +1,6 @@
-using ChainSolve.Modelling;
 using ChainSolve.Language.Diagnostics;
 using ChainSolve.Language.Text;
+using ChainSolve.Modelling;
 using ChainSolve.Numerics.Iteration;
 using ChainSolve.Numerics.Operators;
 using ChainSolve.StateSpace;

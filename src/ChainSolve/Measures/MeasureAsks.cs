@@ -36,7 +36,7 @@ internal static class MeasureAsks
         if (!(share > 0) || share > 1)
         {
             faults.Add(new Diagnostic(
-                NumericCodes.Share.Code,
+                BindingCodes.ShareOutOfRange,
                 Severity.Fault,
                 FormattableString.Invariant($"the quantile of '{measure.Name}' is of the share {share:R}; a share is above 0 and at most 1"),
                 measure.Span,

@@ -97,7 +97,7 @@ public sealed class ProcessTests : IDisposable
             return;
         }
 
-        var outcome = await OwnProcess.RunAsync(["solve", "-", "--out", "/dev/full"], StarterCommand.Text());
+        var outcome = await OwnProcess.RunAsync(["solve", "-", "--quiet", "--out", "/dev/full"], StarterCommand.Text());
 
         Assert.Equal(ExitCodes.FileProblem, outcome.ExitCode);
         Assert.StartsWith("chainsolve: '/dev/full' could not be written: ", outcome.Error, StringComparison.Ordinal);

@@ -50,7 +50,11 @@ public class TransientSolverTests
     {
         var problem = new TransientProblem
         {
-            Generator = Chains.Of(3, (0, 1, 1), (1, 2, 1)), Start = [0, 0, 1], Times = [5], Rates = [[1, 0, 0], [0, 0, 1]], WantsDistributions = true,
+            Generator = Chains.Of(3, (0, 1, 1), (1, 2, 1)),
+            Start = [0, 0, 1],
+            Times = [5],
+            Rates = [[1, 0, 0], [0, 0, 1]],
+            WantsDistributions = true,
         };
         var result = Find(method).Solve(problem, SolveContext.Default);
 
@@ -91,7 +95,12 @@ public class TransientSolverTests
         // One unit that fails at 2 and is repaired, watched until the first failure: survival is e^-2t.
         var problem = new TransientProblem
         {
-            Generator = Chains.Of(2, (0, 1, 2), (1, 0, 1e6)), Start = [0.75, 0.25], Alive = [true, false], Times = [0.1, 40], Rates = [[1, 1]], Totals = [[1, 0]],
+            Generator = Chains.Of(2, (0, 1, 2), (1, 0, 1e6)),
+            Start = [0.75, 0.25],
+            Alive = [true, false],
+            Times = [0.1, 40],
+            Rates = [[1, 1]],
+            Totals = [[1, 0]],
         };
         var result = Find(method).Solve(problem, SolveContext.Default);
 
@@ -171,7 +180,13 @@ public class TransientSolverTests
         {
             var problem = new TransientProblem
             {
-                Generator = chain, Start = start, Alive = alive, Times = [3, 400, 20_000], Rates = [start], Totals = [start], WantsDistributions = true,
+                Generator = chain,
+                Start = start,
+                Alive = alive,
+                Times = [3, 400, 20_000],
+                Rates = [start],
+                Totals = [start],
+                WantsDistributions = true,
             };
             var reached = ReachedChain.Reach(chain, start, alive);
             var plain = new UniformizationPass(problem, reached, isWide: false, SolveContext.Default).Run();

@@ -91,7 +91,7 @@ public class ModelSolvingTests
     {
         var measure = HandMeasures.TimeTo(MeasureKind.QuantileTime, Unit.In("down")).Measure with { Share = new ConstantExpr(share) };
         var fault = Assert.Single(Assert.Throws<ModelFaultsException>(() => new HandModel(Unit, measure).Model.Solve()).Faults);
-        Assert.Equal("N101", fault.Code);
+        Assert.Equal("B272", fault.Code);
     }
 
     [Fact]

@@ -30,6 +30,7 @@ internal static class Sample
         },
         new GivenValues([3.0 / 8760, 2, 84]),
         new ChainHolder((_, _, _, _) => throw new InvalidOperationException("Nothing is solved here.")),
+        [],
         []);
 
     public static Solution Solution() => new()

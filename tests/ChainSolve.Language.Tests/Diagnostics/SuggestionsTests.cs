@@ -1,6 +1,6 @@
-using ChainSolve.Cli.Commands;
+using ChainSolve.Language.Diagnostics;
 
-namespace ChainSolve.Cli.Tests.Commands;
+namespace ChainSolve.Language.Tests.Diagnostics;
 
 public class SuggestionsTests
 {
