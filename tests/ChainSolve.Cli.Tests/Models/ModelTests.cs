@@ -1,6 +1,7 @@
 using System.Text.Json;
 using ChainSolve.Cli.Commands;
 using ChainSolve.Cli.Tests.Support;
+using ChainSolve.Tests.Shared.Files;
 
 namespace ChainSolve.Cli.Tests.Models;
 

@@ -1,6 +1,7 @@
 using System.Reflection;
 using ChainSolve.Cli.Tests.Support;
 using ChainSolve.Language.Diagnostics;
+using ChainSolve.Tests.Shared.Files;
 
 namespace ChainSolve.Cli.Tests.Samples;
 

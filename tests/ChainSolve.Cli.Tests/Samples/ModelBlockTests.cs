@@ -1,5 +1,6 @@
 using ChainSolve.Cli.Commands;
 using ChainSolve.Cli.Tests.Support;
+using ChainSolve.Tests.Shared.Files;
 
 namespace ChainSolve.Cli.Tests.Samples;
 

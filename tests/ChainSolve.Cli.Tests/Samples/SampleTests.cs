@@ -1,4 +1,5 @@
 using ChainSolve.Cli.Tests.Support;
+using ChainSolve.Tests.Shared.Files;
 
 namespace ChainSolve.Cli.Tests.Samples;
 

@@ -1,4 +1,5 @@
 using System.Diagnostics;
+using ChainSolve.Tests.Shared.Files;
 
 namespace ChainSolve.Cli.Tests.Support;
 

@@ -1,7 +1,7 @@
-using System.Runtime.CompilerServices;
 using ChainSolve.Numerics;
 using ChainSolve.Numerics.Estimates;
 using ChainSolve.Numerics.Operators;
+using ChainSolve.Tests.Shared.Files;
 
 namespace ChainSolve.Tests.Samples;
 
@@ -26,9 +26,9 @@ public class ReadmeTests
     [Fact]
     public void Code_OfTheReadme_IsTheCodeThatIsTested()
     {
-        var own = File.ReadAllText(OwnPath());
+        var own = Repository.Read("tests", "ChainSolve.Tests", "Samples", "ReadmeTests.cs");
         var tested = own.Split("// <sample>\n")[1].Split("        // </sample>")[0].Split('\n').Select(l => l.Length > 8 ? l[8..] : l.TrimStart());
-        var readme = File.ReadAllText(Path.Combine(Path.GetDirectoryName(OwnPath())!, "..", "..", "..", "README.md"));
+        var readme = Repository.Read("README.md");
         Assert.Equal(string.Join('\n', tested).TrimEnd(), readme.Split("```csharp\n")[1].Split("```")[0].TrimEnd());
     }
 
@@ -49,8 +49,6 @@ public class ReadmeTests
         Console.WriteLine(chain.TransitionMatrix(100)[0, 1]);
         // </sample>
     }
-
-    private static string OwnPath([CallerFilePath] string path = "") => path;
 
     /// <summary>Stands in for the console.</summary>
     private sealed class Recorder(List<object> written)

@@ -1,4 +1,4 @@
-namespace ChainSolve.Cli.Tests.Support;
+namespace ChainSolve.Tests.Shared.Files;
 
 /// <summary>Finds the files of the repository that tests read.</summary>
 internal static class Repository
