@@ -1,4 +1,3 @@
-using ChainSolve.Language.Diagnostics;
 using ChainSolve.Language.Lexing;
 using ChainSolve.Language.Syntax;
 using Superpower;
@@ -14,38 +13,7 @@ internal static class CommonGrammar
 
     public static readonly TokenListParser<TokenKind, Token<TokenKind>> EqualSign = Symbol(TokenKind.Equal, "'='");
 
-    /// <summary>A number, a name or a bracket: where a whole expression would run into what follows.</summary>
-    public static readonly TokenListParser<TokenKind, ExpressionSyntax> Simple = input =>
-    {
-        var next = input.ConsumeToken();
-        if (!next.HasValue)
-        {
-            return TokenListParserResult.Empty<TokenKind, ExpressionSyntax>(input, ["a number, a name or '('"]);
-        }
-
-        var length = next.Value.Kind switch
-        {
-            TokenKind.Number or TokenKind.Name => 1,
-            TokenKind.OpenBracket => BracketLength(input),
-            _ => 0,
-        };
-        if (length == 0)
-        {
-            return TokenListParserResult.Empty<TokenKind, ExpressionSyntax>(input, ["a number, a name or '('"]);
-        }
-
-        var tokens = input.Take(length).ToArray();
-        var result = Expression(new TokenList<TokenKind>(tokens));
-        var rest = input;
-        for (var i = 0; i < length; i++)
-        {
-            rest = rest.ConsumeToken().Remainder;
-        }
-
-        return result.HasValue
-            ? TokenListParserResult.Value(result.Value, input, rest)
-            : TokenListParserResult.Empty<TokenKind, ExpressionSyntax>(input, ["a number, a name or '('"]);
-    };
+    public static readonly TokenListParser<TokenKind, ExpressionSyntax> Simple = ExpressionReader.ReadSimple;
 
     /// <summary><c>LO .. HI</c>; a bare low end takes the unit that ends the high end.</summary>
     public static readonly TokenListParser<TokenKind, RangeSyntax> Interval =
@@ -81,27 +49,5 @@ internal static class CommonGrammar
         }
 
         return plain.ToString();
-    }
-
-    private static int BracketLength(TokenList<TokenKind> input)
-    {
-        var open = 0;
-        var length = 0;
-        foreach (var token in input)
-        {
-            length++;
-            open += token.Kind switch
-            {
-                TokenKind.OpenBracket => 1,
-                TokenKind.CloseBracket => -1,
-                _ => 0,
-            };
-            if (open == 0)
-            {
-                return length;
-            }
-        }
-
-        throw new SyntaxFaultException(TextCodes.Unclosed, input.ConsumeToken().Value.Place(), "this '(' is not closed; put a ')' behind the expression");
     }
 }

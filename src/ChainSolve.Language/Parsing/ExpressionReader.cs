@@ -18,6 +18,7 @@ internal sealed class ExpressionReader(TokenList<TokenKind> tokens)
     private static readonly string[] Expected = ["a number, a name or '('"];
 
     private TokenList<TokenKind> rest = tokens;
+    private Token<TokenKind> taken;
     private int depth;
 
     /// <summary>Reads as far as the expression goes; a result without a value says what was expected where.</summary>
@@ -25,6 +26,23 @@ internal sealed class ExpressionReader(TokenList<TokenKind> tokens)
     {
         var reader = new ExpressionReader(tokens);
         var value = reader.Whole();
+        return value is null
+            ? TokenListParserResult.Empty<TokenKind, ExpressionSyntax>(reader.rest, Expected)
+            : TokenListParserResult.Value(value, tokens, reader.rest);
+    }
+
+    /// <summary>Reads a number, a name or a bracket and no further, where a whole expression would run into what follows.</summary>
+    public static TokenListParserResult<TokenKind, ExpressionSyntax> ReadSimple(TokenList<TokenKind> tokens)
+    {
+        var reader = new ExpressionReader(tokens);
+        ExpressionSyntax? value = reader.Peek() switch
+        {
+            { Kind: TokenKind.Number } => NumberOf(reader.Take()),
+            { Kind: TokenKind.OpenBracket } => reader.Bracket(),
+            { Kind: TokenKind.Name } name when !Words.Reserved.Contains(name.Words()) =>
+                new NameSyntax { Span = name.Place(), Name = Grammar.IdentifierOf(reader.Take()) },
+            _ => null,
+        };
         return value is null
             ? TokenListParserResult.Empty<TokenKind, ExpressionSyntax>(reader.rest, Expected)
             : TokenListParserResult.Value(value, tokens, reader.rest);
@@ -93,11 +111,6 @@ internal sealed class ExpressionReader(TokenList<TokenKind> tokens)
 
     private ExpressionSyntax? Operand(Level level)
     {
-        if (NextIs("if"))
-        {
-            throw new SyntaxFaultException(TextCodes.IfForm, Peek()!.Value.Place(), "an 'if' inside an expression needs brackets around it: '(if … then … else …)'");
-        }
-
         return level switch
         {
             Level.Or => Chain(Level.And),
@@ -230,6 +243,8 @@ internal sealed class ExpressionReader(TokenList<TokenKind> tokens)
                 return Bracket();
             case TokenKind.Name when !Words.Reserved.Contains(token.Words()):
                 return Named();
+            case TokenKind.Name when token.Is("if"):
+                throw new SyntaxFaultException(TextCodes.IfForm, token.Place(), "an 'if' inside an expression needs brackets around it: '(if … then … else …)'");
             default:
                 return null;
         }
@@ -340,10 +355,10 @@ internal sealed class ExpressionReader(TokenList<TokenKind> tokens)
             return new PerUnitSyntax { Span = TextSpan.Cover(count?.Span ?? name.Span, name.Span), Count = count, Unit = name };
         }
 
-        var found = Peek();
-        var hint = found is { Kind: TokenKind.Name } word && Suggestions.Nearest(word.Words(), UnitWords.All) is { } nearest ? $"; nearest: '{nearest}'" : "";
         throw new SyntaxFaultException(
-            TextCodes.UnitForm, found is { } token ? token.Place() : per.Place(), $"expected a unit of time behind 'per', such as 'per h' or 'per 1000 h'{hint}");
+            TextCodes.UnitForm,
+            Peek() is { } found ? found.Place() : per.Place(),
+            $"expected a unit of time behind 'per', such as 'per h' or 'per 1000 h'{UnitHints.For(taken, Peek())}");
     }
 
     private Token<TokenKind> Close(Token<TokenKind> open)
@@ -355,22 +370,10 @@ internal sealed class ExpressionReader(TokenList<TokenKind> tokens)
 
         if (Peek() is { } next && next.Kind is not (TokenKind.OpenBrace or TokenKind.CloseBrace or TokenKind.LineEnd))
         {
-            throw new SyntaxFaultException(TextCodes.Unexpected, next.Place(), $"expected an operator or ')' before '{next.Words()}'{UnitHint(next)}");
+            throw new SyntaxFaultException(TextCodes.Unexpected, next.Place(), $"expected an operator or ')' before '{next.Words()}'{UnitHints.For(taken, Peek())}");
         }
 
         throw new SyntaxFaultException(TextCodes.Unclosed, open.Place(), "this '(' is not closed; put a ')' behind the expression");
-    }
-
-    /// <summary>Says that a word behind a number is no unit, where that is what went wrong.</summary>
-    public static string UnitHint(Token<TokenKind> found)
-    {
-        if (found.Kind != TokenKind.Name || Words.Reserved.Contains(found.Words()))
-        {
-            return "";
-        }
-
-        var nearest = Suggestions.Nearest(found.Words(), UnitWords.All.Where(u => u.Length > 1));
-        return nearest is null ? "" : $"; nearest unit: '{nearest}'";
     }
 
     private static NumberSyntax NumberOf(Token<TokenKind> token)
@@ -383,7 +386,7 @@ internal sealed class ExpressionReader(TokenList<TokenKind> tokens)
     {
         if (++depth > DeepestNesting)
         {
-            throw new SyntaxFaultException(TextCodes.TooDeep, token.Place(), $"brackets nest deeper than {DeepestNesting}; name a part of the expression with 'let'");
+            throw new SyntaxFaultException(TextCodes.TooDeep, token.Place(), $"brackets, signs, powers and 'if's nest deeper than {DeepestNesting}; name a part of the expression with 'let'");
         }
     }
 
@@ -401,6 +404,6 @@ internal sealed class ExpressionReader(TokenList<TokenKind> tokens)
     {
         var next = rest.ConsumeToken();
         rest = next.Remainder;
-        return next.Value;
+        return taken = next.Value;
     }
 }

@@ -106,7 +106,7 @@ public static class ModelParser
 
         var found = next.Value;
         var shown = found.Kind == TokenKind.LineEnd ? "the end of the line" : $"'{Short(found.Words())}'";
-        return FaultAt(source, TextCodes.Unexpected, found.Place(), $"expected {expected} here, not {shown}{ExpressionReader.UnitHint(found)}");
+        return FaultAt(source, TextCodes.Unexpected, found.Place(), $"expected {expected} here, not {shown}{UnitHints.For(tokens[Math.Max(0, rest.Position - 1)], found)}");
     }
 
     private static string Short(string text) => text.Length <= 40 ? text : string.Concat(text.AsSpan(0, 37), "…");
