@@ -1,4 +1,5 @@
 using System.Diagnostics;
+using System.Globalization;
 using ChainSolve.Tests.Shared.Files;
 
 namespace ChainSolve.Cli.Tests.Support;
@@ -7,9 +8,9 @@ namespace ChainSolve.Cli.Tests.Support;
 internal static class OwnProcess
 {
     /// <summary>Runs a command to its end.</summary>
-    public static async Task<Outcome> RunAsync(string[] words, string? input = null, string? folder = null)
+    public static async Task<Outcome> RunAsync(string[] words, string? input = null, string? folder = null, long? heapLimit = null)
     {
-        using var process = Start(words, folder);
+        using var process = Start(words, folder, heapLimit);
         if (input is not null)
         {
             await process.StandardInput.WriteAsync(input);
@@ -20,7 +21,7 @@ internal static class OwnProcess
     }
 
     /// <summary>Starts a command and leaves it running.</summary>
-    public static Process Start(string[] words, string? folder = null)
+    public static Process Start(string[] words, string? folder = null, long? heapLimit = null)
     {
         var start = new ProcessStartInfo("dotnet")
         {
@@ -30,6 +31,11 @@ internal static class OwnProcess
             WorkingDirectory = folder ?? Repository.Root,
         };
         start.ArgumentList.Add(Path.Combine(AppContext.BaseDirectory, "ChainSolve.Cli.dll"));
+        if (heapLimit is { } bytes)
+        {
+            start.Environment["DOTNET_GCHeapHardLimit"] = bytes.ToString("x", CultureInfo.InvariantCulture);
+        }
+
         foreach (var word in words)
         {
             start.ArgumentList.Add(word);
