@@ -12,6 +12,8 @@ internal sealed class ModelCommand(ProcessStreams streams, Func<byte[], Request,
     public async Task<int> RunAsync(Request request, Func<IModelSession, Work, CommandAnswer> command, CancellationToken stop)
     {
         var printer = new FaultPrinter(streams.Error, ColorChoice.Uses(request.Color, streams));
+        var sink = new AnswerSink(streams, request.Output);
+        sink.Check();
         using var deadline = new Deadline(request.TimeLimit, request.TimeLimitText ?? "", stop);
         try
         {
@@ -35,7 +37,7 @@ internal sealed class ModelCommand(ProcessStreams streams, Func<byte[], Request,
                 printer.Print(session.Warnings);
             }
 
-            new AnswerSink(streams, request.Output).Write(answer.Write);
+            sink.Write(answer.Write);
             if (answer.Complaint is { } complaint)
             {
                 await streams.Error.WriteLineAsync($"chainsolve: {complaint}");
@@ -49,7 +51,7 @@ internal sealed class ModelCommand(ProcessStreams streams, Func<byte[], Request,
         }
         catch (ModelFaultsException exception) when (request.Format == "json")
         {
-            new AnswerSink(streams, request.Output).Write(writer => Report.WriteFaults(exception.Faults, request.File, writer));
+            sink.Write(writer => Report.WriteFaults(exception.Faults, request.File, writer));
             await streams.Error.WriteLineAsync($"chainsolve: {CountOf(exception.Faults)}");
             return ExitCodes.ModelFaults;
         }

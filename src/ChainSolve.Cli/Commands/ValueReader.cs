@@ -1,11 +1,19 @@
 using System.Globalization;
+using ChainSolve.Numerics.Absorption;
+using ChainSolve.Numerics.Stationary;
+using ChainSolve.Numerics.Transient;
 
 namespace ChainSolve.Cli.Commands;
 
 /// <summary>Reads the values of options.</summary>
 internal static class ValueReader
 {
-    private static readonly string[] Jobs = ["transient", "stationary", "absorption"];
+    private static readonly (string Job, string[] Methods)[] Jobs =
+    [
+        ("transient", [.. TransientSolvers.All.Select(s => s.Name)]),
+        ("stationary", [.. StationarySolvers.All.Select(s => s.Name)]),
+        ("absorption", [.. AbsorptionSolvers.All.Select(s => s.Name)]),
+    ];
 
     public static (string Name, string Value) Setting(string text)
     {
@@ -29,8 +37,9 @@ internal static class ValueReader
                 throw new UsageException($"'--method {text}' is not JOB=NAME, for example --method transient=uniformization");
             }
 
-            var job = OneOf("--method", text[..at], Jobs);
-            if (!methods.TryAdd(job, text[(at + 1)..]))
+            var job = OneOf("--method", text[..at], [.. Jobs.Select(j => j.Job)]);
+            var method = OneOf($"--method {job}=", text[(at + 1)..], Jobs.First(j => j.Job == job).Methods);
+            if (!methods.TryAdd(job, method))
             {
                 throw new UsageException($"'--method {job}=' is given twice");
             }

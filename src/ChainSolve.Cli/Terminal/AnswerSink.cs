@@ -3,13 +3,25 @@ namespace ChainSolve.Cli.Terminal;
 /// <summary>Where the answer goes: standard output or a file.</summary>
 internal sealed class AnswerSink(ProcessStreams streams, string? path)
 {
+    private readonly bool isFile = path is not null && path != "-";
+
+    /// <summary>Looks, before the work is done, whether the file can stand at its place.</summary>
+    /// <exception cref="FileProblemException">It cannot.</exception>
+    public void Check()
+    {
+        if (isFile)
+        {
+            AtomicFile.Check(path!);
+        }
+    }
+
     /// <summary>Writes the answer.</summary>
     /// <exception cref="FileProblemException">It could not be written.</exception>
     public void Write(Action<TextWriter> write)
     {
-        if (path is not null && path != "-")
+        if (isFile)
         {
-            AtomicFile.Write(path, write);
+            AtomicFile.Write(path!, write);
             return;
         }
 

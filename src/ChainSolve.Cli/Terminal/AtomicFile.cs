@@ -14,12 +14,7 @@ internal static class AtomicFile
         string? temporary = null;
         try
         {
-            var target = FinalTarget(path);
-            if (Directory.Exists(target))
-            {
-                throw new FileProblemException($"'{path}' is a folder; name a file");
-            }
-
+            var target = Check(path);
             if (IsDevice(target))
             {
                 WriteTo(target, FileMode.Open, write);
@@ -44,6 +39,22 @@ internal static class AtomicFile
                 TryDelete(temporary);
             }
         }
+    }
+
+    /// <summary>Looks, before the work is done, whether a file can stand at a place.</summary>
+    /// <returns>The full path, links followed.</returns>
+    /// <exception cref="FileProblemException">There is a folder at the place, or none to hold the file.</exception>
+    public static string Check(string path)
+    {
+        var target = FinalTarget(path);
+        if (Directory.Exists(target))
+        {
+            throw new FileProblemException($"'{path}' is a folder; name a file");
+        }
+
+        return Path.GetDirectoryName(target) is { } folder && Directory.Exists(folder)
+            ? target
+            : throw new FileProblemException($"'{path}' cannot be written: there is no folder '{Path.GetDirectoryName(target)}'");
     }
 
     private static string FinalTarget(string path)

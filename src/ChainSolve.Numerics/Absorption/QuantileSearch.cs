@@ -38,7 +38,7 @@ internal sealed class QuantileSearch(PassageDistribution distribution, Cancellat
             var next = double.IsFinite(guess) ? Math.Clamp(guess, 2 * early, 1000 * early) : 8 * early;
             if (!double.IsFinite(next))
             {
-                throw new NotConvergedException($"The share is not reached by {early:G3}, the last time that could be asked.");
+                throw new NotConvergedException($"The share is not reached by {early:g3}, the last time that could be asked.");
             }
 
             point = Ask(next);
@@ -108,7 +108,7 @@ internal sealed class QuantileSearch(PassageDistribution distribution, Cancellat
             high = time + (4 * reach);
             if (!double.IsFinite(high))
             {
-                throw new NotConvergedException($"The share is reached at about {time:G3}, but no later time is surely late enough.");
+                throw new NotConvergedException($"The share is reached at about {time:g3}, but no later time is surely late enough.");
             }
         }
 

@@ -51,7 +51,7 @@ internal static class ProblemCheck
         {
             if (!(largest <= LargestResult))
             {
-                throw new NotConvergedException($"A reward may come to {largest:G3}, beyond {LargestResult:G1}. Choose another unit for it or for the time.");
+                throw new NotConvergedException($"A reward may come to {largest:g3}, beyond {LargestResult:g1}. Choose another unit for it or for the time.");
             }
         }
     }

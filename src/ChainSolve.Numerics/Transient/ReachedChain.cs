@@ -61,7 +61,7 @@ internal sealed class ReachedChain
         if (largestExit is not 0 and (< SmallestRate or > LargestRate))
         {
             throw new NotConvergedException(
-                $"The largest exit rate is {largestExit:G3}, outside of {SmallestRate:G1} to {LargestRate:G1}. Choose another unit of time.");
+                $"The largest exit rate is {largestExit:g3}, outside of {SmallestRate:g1} to {LargestRate:g1}. Choose another unit of time.");
         }
     }
 

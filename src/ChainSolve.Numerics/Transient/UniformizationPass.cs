@@ -1,3 +1,4 @@
+using System.Globalization;
 using ChainSolve.Numerics.Arithmetic;
 using ChainSolve.Numerics.Estimates;
 using ChainSolve.Numerics.Iteration;
@@ -62,9 +63,11 @@ internal sealed class UniformizationPass
             answers[0] = TimeAnswer.Still(problem, 0);
         }
 
+        var mean = (step.Rate * times[^1]).High;
+        var shown = mean.ToString(mean < 100 ? "g3" : "F0", CultureInfo.InvariantCulture);
         return TimeAnswer.Gather(
             problem.Times, answers, problem.WantsDistributions,
-            $"uniformization in {(step.IsWide ? "two doubles" : "one double")}, q t = {(step.Rate * times[^1]).High:G3}, {steps} steps");
+            $"uniformization in {(step.IsWide ? "two doubles" : "one double")}, q t = {shown}, {steps} steps");
     }
 
     /// <summary>Goes on until no time needs more; the number of steps taken.</summary>

@@ -63,7 +63,7 @@ public sealed class UniformizationSolver : ITransientSolver
         if (!(mean <= PoissonWindow.LargestMean))
         {
             throw new NotConvergedException(
-                $"Uniformization would take {mean:G3} steps; it is meant for up to {PoissonWindow.LargestMean:G1}. Choose another method.");
+                $"Uniformization would take {mean:g3} steps; it is meant for up to {PoissonWindow.LargestMean:g1}. Choose another method.");
         }
 
         return new UniformizationPass(problem, reached, IsWide(problem, size, mean, context.Tolerance), context).Run();

@@ -111,7 +111,7 @@ internal sealed class PassageGroup(IReadOnlyList<PassagePlan> plans) : MeasureGr
     private static string Never(FirstPassage passage, MeasureContext context)
     {
         var chance = passage.ChanceOfStaying.Value;
-        return string.Create(CultureInfo.InvariantCulture, $"the condition is never met with a chance of {chance:G3}: {Stuck(passage.ClosedClasses[0], context)}");
+        return string.Create(CultureInfo.InvariantCulture, $"the condition is never met with a chance of {chance:g3}: {Stuck(passage.ClosedClasses[0], context)}");
     }
 
     private static string Stuck(int[] group, MeasureContext context)

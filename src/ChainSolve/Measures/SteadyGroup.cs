@@ -61,7 +61,7 @@ internal sealed class SteadyGroup(IReadOnlyList<SteadyPlan> plans) : MeasureGrou
         var listed = result.Classes.OrderByDescending(c => c.Chance.Value).Take(MostListed).Select(c =>
         {
             var states = c.States.Length == 1 ? "" : string.Create(CultureInfo.InvariantCulture, $" and {c.States.Length - 1:N0} more");
-            return string.Create(CultureInfo.InvariantCulture, $"{c.Chance.Value:G3} for '{context.Chain.Describe(c.States[0])}'{states}");
+            return string.Create(CultureInfo.InvariantCulture, $"{c.Chance.Value:g3} for '{context.Chain.Describe(c.States[0])}'{states}");
         });
         var rest = result.Classes.Count > MostListed
             ? string.Create(CultureInfo.InvariantCulture, $", {result.Classes.Count - MostListed:N0} further groups")

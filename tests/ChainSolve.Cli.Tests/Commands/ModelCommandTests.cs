@@ -138,12 +138,31 @@ public sealed class ModelCommandTests : IDisposable
     [InlineData("likely -", "say when: either --at TIME or --steady")]
     [InlineData("likely - --at 3h --steady", "say when: either --at TIME or --steady")]
     [InlineData("likely - --steady --count 0", "'--count 0' is not a whole number from 1 to 1000000")]
-    public async Task Run_WrongTimes_SayWhatIsWanted(string words, string message)
+    [InlineData("solve - --method gth", "'--method gth' is not JOB=NAME, for example --method transient=uniformization")]
+    [InlineData("solve - --method steady=gth", "'--method' does not know 'steady'; known: transient, stationary, absorption")]
+    [InlineData("solve - --method transient=squarin", "'--method transient=' does not know 'squarin'; known: squaring, uniformization; nearest: 'squaring'")]
+    [InlineData("solve - --method transient=squaring --method transient=uniformization", "'--method transient=' is given twice")]
+    [InlineData("solve - --tolerance 2", "'--tolerance 2' is not a number above 0 and below 1, for example --tolerance 1e-9")]
+    [InlineData("solve - --set mttr", "'--set mttr' is not NAME=VALUE, for example --set mttr=\"4 h\"")]
+    public async Task Run_WrongOptions_SayWhatIsWanted(string words, string message)
     {
         var outcome = await RunAsync(Answering(), words.Split(' '));
 
         Assert.Equal(ExitCodes.Usage, outcome.ExitCode);
         Assert.StartsWith($"chainsolve: {message}\n", outcome.Error, StringComparison.Ordinal);
+    }
+
+    [Fact]
+    public async Task Run_OutInAFolderThatIsMissing_SaysSoBeforeTheWork()
+    {
+        var session = Answering();
+
+        var outcome = await RunAsync(session, "solve", "-", "--out", folder.File("missing/answer"));
+
+        Assert.Equal(
+            new Outcome(ExitCodes.FileProblem, "", $"chainsolve: '{folder.File("missing/answer")}' cannot be written: there is no folder '{folder.File("missing")}'\n"),
+            outcome);
+        Assert.Empty(session.Asked);
     }
 
     public void Dispose() => folder.Dispose();

@@ -78,13 +78,13 @@ public sealed class AtomicFileTests : IDisposable
     }
 
     [Fact]
-    public void Write_MissingFolder_NamesTheFile()
+    public void Write_MissingFolder_NamesIt()
     {
         var path = Path.Combine(folder.Path, "missing", "a.txt");
 
         var exception = Assert.Throws<FileProblemException>(() => AtomicFile.Write(path, writer => writer.Write("x")));
 
-        Assert.StartsWith($"'{path}' could not be written: ", exception.Message, StringComparison.Ordinal);
+        Assert.Equal($"'{path}' cannot be written: there is no folder '{Path.Combine(folder.Path, "missing")}'", exception.Message);
     }
 
     public void Dispose() => folder.Dispose();
