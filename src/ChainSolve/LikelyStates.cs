@@ -3,6 +3,9 @@ namespace ChainSolve;
 /// <summary>The most likely states of a model, the most likely first. Immutable; safe to share between threads.</summary>
 public sealed record LikelyStates
 {
+    /// <summary>The model.</summary>
+    public required Model Model { get; init; }
+
     /// <summary>The time, in the model's unit; null for the long run.</summary>
     public required double? Time { get; init; }
 

@@ -35,7 +35,7 @@ public sealed partial class Model
             }
 
             var matrix = Numerics.Transient.TransitionMatrix.Compute(chain.Generator, time, used.Context(token));
-            return new StateMatrix(matrix, [.. Enumerable.Range(0, count).Select(chain.Describe)]);
+            return new StateMatrix(this, matrix, [.. Enumerable.Range(0, count).Select(chain.Describe)]);
         }
     }
 
@@ -67,13 +67,14 @@ public sealed partial class Model
         }
     }
 
-    private static LikelyStates LikelyAt(Chain chain, double time, int count, SolveOptions options, CancellationToken cancellation)
+    private LikelyStates LikelyAt(Chain chain, double time, int count, SolveOptions options, CancellationToken cancellation)
     {
         var problem = new TransientProblem { Generator = chain.Generator, Start = chain.Start, Times = [time], WantsDistributions = true };
         var (result, choice) = Numerics.Transient.TransientSolvers.Solve(
             problem, options.TransientMethod, options.TransientSolvers, options.Context(cancellation));
         return new LikelyStates
         {
+            Model = this,
             Time = time,
             States = Rank(chain, result.Distributions![0], i => result.DistributionBounds![0][i], count),
             StateCount = chain.Generator.StateCount,
@@ -82,11 +83,12 @@ public sealed partial class Model
         };
     }
 
-    private static LikelyStates LikelyAtLast(Chain chain, int count, SolveOptions options, CancellationToken cancellation)
+    private LikelyStates LikelyAtLast(Chain chain, int count, SolveOptions options, CancellationToken cancellation)
     {
         var result = LongRun.Solve(chain.Generator, chain.Start, options.Solvers(), options.Context(cancellation));
         return new LikelyStates
         {
+            Model = this,
             Time = null,
             States = Rank(chain, result.Limit, i => result.Limit[i] * result.RelativeBound, count),
             StateCount = chain.Generator.StateCount,

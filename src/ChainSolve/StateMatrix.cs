@@ -9,10 +9,13 @@ public sealed class StateMatrix
 {
     private readonly TransitionMatrix matrix;
 
-    internal StateMatrix(TransitionMatrix matrix, IReadOnlyList<string> states)
+    internal StateMatrix(Model model, TransitionMatrix matrix, IReadOnlyList<string> states)
     {
-        (this.matrix, States) = (matrix, states);
+        (Model, this.matrix, States) = (model, matrix, states);
     }
+
+    /// <summary>The model.</summary>
+    public Model Model { get; }
 
     /// <summary>The states in the model's own words, in the order of rows and columns.</summary>
     public IReadOnlyList<string> States { get; }

@@ -1,4 +1,3 @@
-using ChainSolve.Cli.Answers;
 using ChainSolve.Language.Diagnostics;
 using ChainSolve.Numerics.Estimates;
 using ChainSolve.Reports;
@@ -62,27 +61,14 @@ internal sealed class ModelSession : IModelSession
     public CommandAnswer Matrix(double time, Work work)
     {
         var matrix = model.TransitionMatrix(time, Options(work), work.Cancellation);
-        var states = Enumerable.Range(0, matrix.States.Count).ToArray();
-        var answer = new MatrixAnswer
-        {
-            Model = Title,
-            Time = time,
-            Unit = model.TimeUnit,
-            States = matrix.States,
-            Chances = [.. states.Select(i => states.Select(j => matrix[i, j].Value).ToArray())],
-            Bounds = [.. states.Select(i => states.Select(j => matrix[i, j].Bound).ToArray())],
-        };
-        return new CommandAnswer(ExitCodes.Done, writer => answer.Write(writer, request.Format));
+        return new CommandAnswer(ExitCodes.Done, writer => Report.Write(matrix, Format, writer));
     }
 
     public CommandAnswer Likely(double? time, int count, Work work)
     {
         var likely = model.LikelyStates(time, count, Options(work), work.Cancellation);
-        var answer = new LikelyAnswer { Model = Title, Time = time, Unit = model.TimeUnit, StateCount = likely.StateCount, States = likely.States };
-        return new CommandAnswer(ExitCodes.Done, writer => answer.Write(writer, request.Format));
+        return new CommandAnswer(ExitCodes.Done, writer => Report.Write(likely, Format, writer));
     }
-
-    private string Title => model.Title ?? model.Name;
 
     private ReportFormat Format => request.Format switch
     {

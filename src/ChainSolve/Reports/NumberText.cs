@@ -18,11 +18,14 @@ internal static class NumberText
     /// <summary>A number that people wrote, such as a time, without the noise of its last digits.</summary>
     public static string Written(double value) => Plain(value, 12);
 
+    /// <summary>A time with the model's unit.</summary>
+    public static string Time(double time, Model model) => model.TimeUnit.Length == 0 ? Written(time) : $"{Written(time)} {model.TimeUnit}";
+
     /// <summary>A count.</summary>
     public static string Count(long value) => value.ToString("N0", CultureInfo.InvariantCulture);
 
-    /// <summary>The digits that the error bound earns; at least one.</summary>
-    public static string Earned(double value, double bound)
+    /// <summary>The digits that the error bound earns; at least one, and no more than wanted.</summary>
+    public static string Earned(double value, double bound, int most = MostDigits)
     {
         if (double.IsPositiveInfinity(value))
         {
@@ -34,7 +37,7 @@ internal static class NumberText
             return "-infinite";
         }
 
-        return value == 0 ? "0" : Plain(value, EarnedDigits(value, bound));
+        return value == 0 ? "0" : Plain(value, Math.Min(most, EarnedDigits(value, bound)));
     }
 
     /// <summary>An error bound, rounded up to two digits.</summary>

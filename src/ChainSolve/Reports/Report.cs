@@ -53,6 +53,42 @@ public static class Report
         }
     }
 
+    /// <summary>Writes a transition matrix.</summary>
+    /// <param name="matrix">The matrix.</param>
+    /// <param name="format">The form.</param>
+    /// <param name="writer">Where to; it is left open.</param>
+    public static void Write(StateMatrix matrix, ReportFormat format, TextWriter writer)
+    {
+        ArgumentNullException.ThrowIfNull(matrix);
+        ArgumentNullException.ThrowIfNull(writer);
+        Action<StateMatrix, TextWriter> write = format switch
+        {
+            ReportFormat.Text => MatrixReport.WriteText,
+            ReportFormat.Json => MatrixReport.WriteJson,
+            ReportFormat.Csv => MatrixReport.WriteCsv,
+            _ => throw new ArgumentOutOfRangeException(nameof(format), format, "Unknown form."),
+        };
+        write(matrix, writer);
+    }
+
+    /// <summary>Writes the most likely states.</summary>
+    /// <param name="likely">The states.</param>
+    /// <param name="format">The form.</param>
+    /// <param name="writer">Where to; it is left open.</param>
+    public static void Write(LikelyStates likely, ReportFormat format, TextWriter writer)
+    {
+        ArgumentNullException.ThrowIfNull(likely);
+        ArgumentNullException.ThrowIfNull(writer);
+        Action<LikelyStates, TextWriter> write = format switch
+        {
+            ReportFormat.Text => LikelyReport.WriteText,
+            ReportFormat.Json => LikelyReport.WriteJson,
+            ReportFormat.Csv => LikelyReport.WriteCsv,
+            _ => throw new ArgumentOutOfRangeException(nameof(format), format, "Unknown form."),
+        };
+        write(likely, writer);
+    }
+
     /// <summary>Writes faults and warnings as a JSON document.</summary>
     /// <param name="diagnostics">The faults and warnings, in the order of the text.</param>
     /// <param name="file">The name of the file.</param>
