@@ -35,7 +35,8 @@ internal sealed class BoundTally
 
         var isNumber = double.IsFinite(value) && bound >= 0;
         var error = isNumber ? (value - truth).Abs : BigFloat.One;
-        if (!isNumber || (error > bound && error > Negligible && error > truth.Abs * ReferenceRounding))
+        var isSeen = error > Negligible && error > truth.Abs * ReferenceRounding;
+        if (!isNumber || (error > bound && isSeen))
         {
             failures.Add(string.Create(
                 CultureInfo.InvariantCulture,
@@ -55,7 +56,7 @@ internal sealed class BoundTally
 
         lists.Widths.Add(bound / truth.Abs.ToDouble());
         lists.Errors.Add((error / truth.Abs).ToDouble());
-        if (error > Negligible)
+        if (isSeen)
         {
             lists.Ratios.Add((bound / error).ToDouble());
         }
