@@ -26,6 +26,9 @@ public readonly record struct Estimate(double Value, double Bound, bool IsProved
     /// <summary>The estimate of an exact number.</summary>
     public static implicit operator Estimate(double value) => Exact(value);
 
+    /// <summary>The number and its bound, such as <c>0.25 ± 1.1e-17</c>, the same in every culture.</summary>
+    public override string ToString() => FormattableString.Invariant($"{Value:R} ± {Bound:g2}{(IsProved ? "" : " (estimated)")}");
+
     /// <summary>The sum.</summary>
     public static Estimate operator +(Estimate a, Estimate b)
     {

@@ -85,4 +85,11 @@ public class EstimateTests
             Assert.True((estimate.Value - truth).Abs <= estimate.Bound, $"{estimate} does not enclose {truth}.");
         }
     }
+
+    [Fact]
+    public void ToString_ValueAndBound_BothShown()
+    {
+        Assert.Equal("0.25 ± 1.5e-17", new Estimate(0.25, 1.5e-17, true).ToString());
+        Assert.Equal("-3 ± 0 (estimated)", new Estimate(-3, 0, false).ToString());
+    }
 }
