@@ -15,6 +15,9 @@ internal struct LongSum
     /// <summary>The sum so far.</summary>
     public readonly double Value => double.IsFinite(low) ? high + low : high;
 
+    /// <summary>A sum of two parts.</summary>
+    public static LongSum Of(double high, double low) => new() { high = high, low = low };
+
     /// <summary>The sum of products of two vectors.</summary>
     public static double Dot(double[] a, double[] b)
     {
@@ -45,6 +48,13 @@ internal struct LongSum
         var part = sum - high;
         low += high - (sum - part) + (term - part);
         high = sum;
+    }
+
+    /// <summary>Adds another sum.</summary>
+    public void Add(LongSum other)
+    {
+        low += other.low;
+        Add(other.high);
     }
 
     /// <summary>Adds a product with its own rounding error; a factor of 0 adds nothing, whatever the other is.</summary>

@@ -2,6 +2,7 @@ using System.Globalization;
 using ChainSolve.Numerics.Arithmetic;
 using ChainSolve.Numerics.Estimates;
 using ChainSolve.Numerics.Iteration;
+using ChainSolve.Numerics.Kernels;
 using ChainSolve.Numerics.Poisson;
 
 namespace ChainSolve.Numerics.Transient;
@@ -19,7 +20,7 @@ internal sealed class UniformizationPass
     private readonly DoubleDouble mass;
     private readonly bool isKept;
 
-    public UniformizationPass(TransientProblem problem, bool[] reached, bool isWide, SolveContext context)
+    public UniformizationPass(TransientProblem problem, bool[] reached, bool isWide, IStepKernel kernel, SolveContext context)
     {
         this.problem = problem;
         this.reached = reached;
@@ -31,7 +32,7 @@ internal sealed class UniformizationPass
         double[][] rates = [.. problem.Rates, .. ones];
         double[][] totals = [.. problem.Totals, .. ones];
         (RateCount, TotalCount) = (rates.Length, totals.Length);
-        step = new UniformizedStep(problem.Generator, problem.Start, reached, [.. rates, .. totals], isWide, context.Threads, context.Cancellation);
+        step = new UniformizedStep(problem.Generator, problem.Start, reached, [.. rates, .. totals], isWide, kernel, context.Threads, context.Cancellation);
         for (var i = 0; i < reached.Length; i++)
         {
             mass += reached[i] ? problem.Start[i] : 0;
@@ -136,10 +137,10 @@ internal sealed class UniformizationPass
     }
 
     /// <summary>
-    /// The mass that was dropped: elements below <see cref="UniformizedStep.Flushed"/>, and what underflowed above them.
+    /// The mass that was dropped: elements below <see cref="StepScale.Flushed"/>, and what underflowed above them.
     /// </summary>
     private double Lost(long steps) =>
-        (step.DroppedCount * UniformizedStep.Flushed)
+        (step.DroppedCount * StepScale.Flushed)
         + (steps * (double)reached.Length * (step.MostInto + 2) * Math.ScaleB(1 + step.Inverse, -1070));
 
     private bool Loses()

@@ -1,4 +1,5 @@
 using ChainSolve.Numerics.Iteration;
+using ChainSolve.Numerics.Kernels;
 using ChainSolve.Numerics.Poisson;
 
 namespace ChainSolve.Numerics.Transient;
@@ -14,11 +15,6 @@ namespace ChainSolve.Numerics.Transient;
 /// </remarks>
 public sealed class UniformizationSolver : ITransientSolver
 {
-    // What one entry of the generator takes in one step, with vectors of one double and of two, in operations of the kind
-    // that runs from registers: the entries wait for memory.
-    private const double PlainOperations = 6;
-    private const double WideOperations = 14;
-
     // Up to about a second vectors are always of two doubles.
     private const double AffordableOperations = 8e9;
 
@@ -38,10 +34,12 @@ public sealed class UniformizationSolver : ITransientSolver
             return double.PositiveInfinity;
         }
 
-        var isWide = IsWide(problem, size, mean, SolveContext.Default.Tolerance);
+        // Before anything is laid out: as on rows.
+        var kernel = new RowKernel(problem.Generator.Columns);
+        var isWide = IsWide(problem, size, mean, kernel, SolveContext.Default.Tolerance);
         var rewards = problem.Times.Count * (problem.Rates.Count + problem.Totals.Count) * 10.0;
         var vectors = problem.WantsDistributions ? 10.0 * problem.Generator.StateCount * problem.Times.Count : 0;
-        return (StepCount(mean) * ((Entries(problem, size) * (isWide ? WideOperations : PlainOperations)) + rewards)) + ((StepCount(mean) - mean) * vectors);
+        return (StepCount(mean) * ((Entries(problem, size) * (isWide ? kernel.WideOperations : kernel.PlainOperations)) + rewards)) + ((StepCount(mean) - mean) * vectors);
     }
 
     /// <inheritdoc/>
@@ -66,18 +64,20 @@ public sealed class UniformizationSolver : ITransientSolver
                 $"Uniformization would take {mean:g3} steps; it is meant for up to {PoissonWindow.LargestMean:g1}. Choose another method.");
         }
 
-        return new UniformizationPass(problem, reached, IsWide(problem, size, mean, context.Tolerance), context).Run();
+        var kernel = StepKernels.For(problem.Generator.Columns, reached, (long)StepCount(mean), context.Cancellation);
+        return new UniformizationPass(problem, reached, IsWide(problem, size, mean, kernel, context.Tolerance), kernel, context).Run();
     }
 
     /// <summary>Whether vectors of two doubles would be taken: where they take little, and where one would be too rough.</summary>
     internal static bool IsWide(TransientProblem problem) =>
-        ProblemSize.Estimate(problem) is var size && IsWide(problem, size, LongestMean(size, problem.Times), SolveContext.Default.Tolerance);
+        ProblemSize.Estimate(problem) is var size
+        && IsWide(problem, size, LongestMean(size, problem.Times), new RowKernel(problem.Generator.Columns), SolveContext.Default.Tolerance);
 
-    private static bool IsWide(TransientProblem problem, ProblemSize size, double mean, double tolerance)
+    private static bool IsWide(TransientProblem problem, ProblemSize size, double mean, IStepKernel kernel, double tolerance)
     {
         // One double loses a rounding or so an entry and a step.
         var loss = StepCount(mean) * ((size.Transitions / Math.Max(1.0, size.States)) + 5) * Rounding;
-        return StepCount(mean) * Entries(problem, size) * WideOperations <= AffordableOperations || loss * 4 > tolerance;
+        return StepCount(mean) * Entries(problem, size) * kernel.WideOperations <= AffordableOperations || loss * 4 > tolerance;
     }
 
     private static double Entries(TransientProblem problem, ProblemSize size) => size.Transitions + (3.0 * problem.Generator.StateCount);

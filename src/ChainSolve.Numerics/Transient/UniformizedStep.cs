@@ -1,4 +1,5 @@
 using ChainSolve.Numerics.Arithmetic;
+using ChainSolve.Numerics.Kernels;
 using ChainSolve.Numerics.Operators;
 
 namespace ChainSolve.Numerics.Transient;
@@ -14,9 +15,6 @@ namespace ChainSolve.Numerics.Transient;
 /// </remarks>
 internal sealed class UniformizedStep
 {
-    /// <summary>Elements below this are dropped, and counted.</summary>
-    public const double Flushed = 1e-300;
-
     /// <summary>How much q is above the largest exit rate, so that no state is left for sure and periods die out.</summary>
     public const double Margin = 1.02;
 
@@ -25,10 +23,9 @@ internal sealed class UniformizedStep
     // Below this many entries a second thread costs more than it saves.
     private const long ParallelEntries = 400_000;
 
-    private readonly SparseRows columns;
-    private readonly bool[] reached;
-    private readonly double[] stays;
-    private readonly double[]? staysLow;
+    private readonly IStepKernel kernel;
+    private readonly StepVectors vectors;
+    private readonly StepScale scale;
     private readonly RewardList[] rewards;
     private readonly int[] listOf;
     private readonly double[] partial;
@@ -37,41 +34,41 @@ internal sealed class UniformizedStep
     private readonly ParallelOptions? parallel;
     private readonly CancellationToken cancellation;
     private readonly Action<int> work;
-    private double[] x;
-    private double[] y;
-    private double[] xLow;
-    private double[] yLow;
 
+    /// <summary>Prepares the first vector.</summary>
+    /// <param name="generator">The chain.</param>
+    /// <param name="start">The vector to begin with.</param>
+    /// <param name="reached">The states that count.</param>
+    /// <param name="rewards">What is multiplied with each vector.</param>
+    /// <param name="isWide">Whether elements are of two doubles.</param>
+    /// <param name="kernel">Takes the steps.</param>
+    /// <param name="threads">How many threads may work.</param>
+    /// <param name="cancellation">Looked at once a chunk.</param>
     public UniformizedStep(
-        Generator generator, double[] start, bool[] reached, IReadOnlyList<double[]> rewards, bool isWide, int threads, CancellationToken cancellation)
+        Generator generator,
+        double[] start,
+        bool[] reached,
+        IReadOnlyList<double[]> rewards,
+        bool isWide,
+        IStepKernel kernel,
+        int threads,
+        CancellationToken cancellation)
     {
-        columns = generator.Columns;
-        this.reached = reached;
         this.cancellation = cancellation;
+        var columns = generator.Columns;
         var count = generator.StateCount;
         ChunkCount = ((count - 1) / ChunkStates) + 1;
         var (exits, largest) = Exits(generator, reached);
         Inverse = 1 / (Margin * largest.High);
         Rate = DoubleDouble.One / Inverse;
-        stays = new double[count];
-        staysLow = isWide ? new double[count] : null;
+        IsWide = isWide;
+        scale = ScaleOf(exits, reached);
+        this.kernel = kernel;
+        vectors = new StepVectors(count, isWide);
         for (var i = 0; i < count; i++)
         {
-            var stay = Rate - exits[i];
-            stays[i] = stay.High;
-            if (isWide)
-            {
-                staysLow![i] = stay.Low;
-            }
+            vectors.Read[i] = reached[i] ? start[i] : 0;
         }
-
-        (x, y) = (new double[count], new double[count]);
-        (xLow, yLow) = isWide ? (new double[count], new double[count]) : ([], []);
-        for (var i = 0; i < count; i++)
-        {
-            x[i] = reached[i] ? start[i] : 0;
-        }
-
 
         // The same reward is often asked both as a rate and as a total: it is summed once.
         double[][] distinct = [.. rewards.Distinct(ReferenceEqualityComparer.Instance).Cast<double[]>()];
@@ -83,12 +80,15 @@ internal sealed class UniformizedStep
         parallel = threads > 1 && ChunkCount > 1 && columns.EntryCount >= ParallelEntries
             ? new ParallelOptions { MaxDegreeOfParallelism = threads, CancellationToken = cancellation }
             : null;
-        work = isWide ? WideChunk : PlainChunk;
+        work = Work;
         MostInto = Enumerable.Range(0, count).Max(j => (int)(columns.Offsets[j + 1] - columns.Offsets[j]));
         for (var c = 0; c < ChunkCount; c++)
         {
-            Earn(x, c);
-            masses[c] = x.AsSpan(c * ChunkStates, Math.Min(ChunkStates, count - (c * ChunkStates))).ToArray().Sum();
+            Earn(vectors.Read, c);
+            foreach (var p in vectors.Read.Slice(c * ChunkStates, Math.Min(ChunkStates, count - (c * ChunkStates))))
+            {
+                masses[c] += p;
+            }
         }
     }
 
@@ -104,9 +104,9 @@ internal sealed class UniformizedStep
     public int ChunkCount { get; }
 
     /// <summary>The vector, rounded to doubles.</summary>
-    public double[] Vector => x;
+    public ReadOnlySpan<double> Vector => vectors.Read;
 
-    public bool IsWide => staysLow is not null;
+    public bool IsWide { get; }
 
     /// <summary>
     /// The relative error that one step adds to every element: sums of non-negative products, the entry on the diagonal
@@ -116,7 +116,7 @@ internal sealed class UniformizedStep
         ? (WideRows.ProductUnits(MostInto + 1) + (51 * 3 * (MostOut + 8)) + 40) * DoubleDouble.Unit
         : (MostInto + 5) * 1.2e-16;
 
-    /// <summary>How many elements were dropped so far; each took less than <see cref="Flushed"/> with it.</summary>
+    /// <summary>How many elements were dropped so far; each took less than <see cref="StepScale.Flushed"/> with it.</summary>
     public long DroppedCount => dropped.Sum();
 
     /// <summary>The sum of the vector, within 1e-9.</summary>
@@ -155,8 +155,7 @@ internal sealed class UniformizedStep
             Parallel.For(0, ChunkCount, parallel, work);
         }
 
-        (x, y) = (y, x);
-        (xLow, yLow) = (yLow, xLow);
+        vectors.Swap();
     }
 
     private (DoubleDouble[] Exits, DoubleDouble Largest) Exits(Generator generator, bool[] among)
@@ -178,7 +177,24 @@ internal sealed class UniformizedStep
         return (exits, largest);
     }
 
-    private void Earn(double[] vector, int chunk)
+    private StepScale ScaleOf(DoubleDouble[] exits, bool[] reached)
+    {
+        var length = exits.Length + StepVectors.Lanes;
+        var (high, low) = (new double[length], IsWide ? new double[length] : []);
+        for (var i = 0; i < exits.Length; i++)
+        {
+            var stay = reached[i] ? Rate - exits[i] : 0;
+            high[i] = stay.High;
+            if (IsWide)
+            {
+                low[i] = stay.Low;
+            }
+        }
+
+        return new StepScale(high, low, Inverse);
+    }
+
+    private void Earn(ReadOnlySpan<double> vector, int chunk)
     {
         for (var r = 0; r < rewards.Length; r++)
         {
@@ -186,83 +202,13 @@ internal sealed class UniformizedStep
         }
     }
 
-    private void PlainChunk(int chunk)
+    private void Work(int chunk)
     {
-        var (offsets, sources, rates) = (columns.Offsets, columns.Targets, columns.Values);
-        var (from, to) = (x, y);
-        var last = Math.Min(from.Length, (chunk + 1) * ChunkStates);
-        var mass = 0.0;
-        for (var j = chunk * ChunkStates; j < last; j++)
-        {
-            if (!reached[j])
-            {
-                continue;
-            }
-
-            var sum = from[j] * stays[j];
-            var end = (int)offsets[j + 1];
-            for (var e = (int)offsets[j]; e < end; e++)
-            {
-                sum += rates[e] * from[sources[e]];
-            }
-
-            sum *= Inverse;
-            if (sum < Flushed && sum > 0)
-            {
-                sum = 0;
-                dropped[chunk]++;
-            }
-
-            to[j] = sum;
-            mass += sum;
-        }
-
-        masses[chunk] = mass;
-        Earn(to, chunk);
-    }
-
-    private void WideChunk(int chunk)
-    {
-        var (offsets, sources, rates) = (columns.Offsets, columns.Targets, columns.Values);
-        var (from, fromLow, to, toLow) = (x, xLow, y, yLow);
-        var last = Math.Min(from.Length, (chunk + 1) * ChunkStates);
-        var mass = 0.0;
-        for (var j = chunk * ChunkStates; j < last; j++)
-        {
-            if (!reached[j])
-            {
-                continue;
-            }
-
-            var sum = from[j] * stays[j];
-            var rest = Math.FusedMultiplyAdd(from[j], stays[j], -sum);
-            rest = Math.FusedMultiplyAdd(from[j], staysLow![j], rest);
-            rest = Math.FusedMultiplyAdd(fromLow[j], stays[j], rest);
-            var end = (int)offsets[j + 1];
-            for (var e = (int)offsets[j]; e < end; e++)
-            {
-                var (rate, value) = (rates[e], from[sources[e]]);
-                var product = rate * value;
-                var small = Math.FusedMultiplyAdd(rate, value, -product);
-                small = Math.FusedMultiplyAdd(rate, fromLow[sources[e]], small);
-                var next = sum + product;
-                var part = next - sum;
-                rest += (sum - (next - part)) + (product - part) + small;
-                sum = next;
-            }
-
-            var scaled = DoubleDouble.Of(sum, rest) * Inverse;
-            if (scaled.High < Flushed && scaled.High > 0)
-            {
-                scaled = 0;
-                dropped[chunk]++;
-            }
-
-            (to[j], toLow[j]) = (scaled.High, scaled.Low);
-            mass += scaled.High;
-        }
-
-        masses[chunk] = mass;
-        Earn(to, chunk);
+        var first = chunk * ChunkStates;
+        var last = Math.Min(vectors.Count, first + ChunkStates);
+        var tally = IsWide ? kernel.Wide(vectors, scale, first, last) : kernel.Plain(vectors, scale, first, last);
+        masses[chunk] = tally.Mass;
+        dropped[chunk] += tally.Dropped;
+        Earn(vectors.Written, chunk);
     }
 }

@@ -1,5 +1,4 @@
 using System.Diagnostics;
-using System.Globalization;
 using ChainSolve.Tests.Shared.Files;
 
 namespace ChainSolve.Cli.Tests.Support;
@@ -8,9 +7,9 @@ namespace ChainSolve.Cli.Tests.Support;
 internal static class OwnProcess
 {
     /// <summary>Runs a command to its end.</summary>
-    public static async Task<Outcome> RunAsync(string[] words, string? input = null, string? folder = null, long? heapLimit = null)
+    public static async Task<Outcome> RunAsync(string[] words, string? input = null, string? folder = null, params (string Name, string Value)[] settings)
     {
-        using var process = Start(words, folder, heapLimit);
+        using var process = Start(words, folder, settings);
         if (input is not null)
         {
             await process.StandardInput.WriteAsync(input);
@@ -21,7 +20,7 @@ internal static class OwnProcess
     }
 
     /// <summary>Starts a command and leaves it running.</summary>
-    public static Process Start(string[] words, string? folder = null, long? heapLimit = null)
+    public static Process Start(string[] words, string? folder = null, params (string Name, string Value)[] settings)
     {
         var start = new ProcessStartInfo("dotnet")
         {
@@ -31,9 +30,9 @@ internal static class OwnProcess
             WorkingDirectory = folder ?? Repository.Root,
         };
         start.ArgumentList.Add(Path.Combine(AppContext.BaseDirectory, "ChainSolve.Cli.dll"));
-        if (heapLimit is { } bytes)
+        foreach (var (name, value) in settings)
         {
-            start.Environment["DOTNET_GCHeapHardLimit"] = bytes.ToString("x", CultureInfo.InvariantCulture);
+            start.Environment[name] = value;
         }
 
         foreach (var word in words)

@@ -10,7 +10,8 @@ public class LatticeTests
 {
     private const int Replicas = 15;
 
-    private const long HeapLimit = 1_400_000_000;
+    // Bytes, in hexadecimal as the runtime reads them: 1.4e9.
+    private static readonly (string Name, string Value) HeapLimit = ("DOTNET_GCHeapHardLimit", 1_400_000_000.ToString("x", CultureInfo.InvariantCulture));
 
     private static readonly (double Failure, double Repair, int Needed)[] Items =
         [(1e-3, 0.01, 12), (2e-3, 0.02, 12), (3e-3, 0.015, 10), (1.5e-3, 0.03, 12), (2.5e-3, 0.025, 12)];
@@ -30,7 +31,7 @@ public class LatticeTests
     {
         string[] choice = method is null ? [] : ["--method", $"stationary={method}", "--measure", "long_run"];
 
-        var outcome = await OwnProcess.RunAsync(["solve", "-", "--format", "csv", "--quiet", .. choice], Text, heapLimit: HeapLimit);
+        var outcome = await OwnProcess.RunAsync(["solve", "-", "--format", "csv", "--quiet", .. choice], Text, settings: [HeapLimit]);
 
         Assert.Equal("", outcome.Error);
         Assert.Equal(ExitCodes.Done, outcome.ExitCode);

@@ -1,5 +1,6 @@
 using ChainSolve.Numerics.Estimates;
 using ChainSolve.Numerics.Iteration;
+using ChainSolve.Numerics.Kernels;
 using ChainSolve.Numerics.Operators;
 using ChainSolve.Numerics.Tests.Support;
 using ChainSolve.Numerics.Transient;
@@ -189,7 +190,7 @@ public class TransientSolverTests
                 WantsDistributions = true,
             };
             var reached = ReachedChain.Reach(chain, start, alive);
-            var plain = new UniformizationPass(problem, reached, isWide: false, SolveContext.Default).Run();
+            var plain = new UniformizationPass(problem, reached, isWide: false, new RowKernel(chain.Columns), SolveContext.Default).Run();
             var exact = new SquaringSolver().Solve(problem, SolveContext.Default);
             for (var t = 0; t < 3; t++)
             {
@@ -228,7 +229,7 @@ public class TransientSolverTests
     }
 
     [Fact]
-    public void Solve_OnTwoThreads_HasTheSameDigits()
+    public void Solve_OnTwoThreadsAndWithVectors_HasTheSameDigits()
     {
         var chain = Chains.Lattice([400, 300], (a, l) => 0.3 + (0.1 * a) + (0.01 * l), (a, l) => 1 + (0.2 * a * l));
         var start = Chains.StartAt(chain.StateCount, 777);
@@ -237,8 +238,9 @@ public class TransientSolverTests
         {
             var problem = new TransientProblem { Generator = chain, Start = start, Times = [0.02], Rates = [reward, start], Totals = [reward] };
             var reached = ReachedChain.Reach(chain, start, null);
-            var one = new UniformizationPass(problem, reached, wide, SolveContext.Default).Run();
-            var two = new UniformizationPass(problem, reached, wide, new SolveContext { Threads = 2 }).Run();
+            var one = new UniformizationPass(problem, reached, wide, new RowKernel(chain.Columns), SolveContext.Default).Run();
+            var two = new UniformizationPass(
+                problem, reached, wide, StepKernels.For(chain.Columns, reached, 1000, CancellationToken.None), new SolveContext { Threads = 2 }).Run();
 
             Assert.Equal(one.Rates[0], two.Rates[0]);
             Assert.Equal(one.Totals[0], two.Totals[0]);
