@@ -11,7 +11,7 @@ internal sealed class CommonOptions
     private readonly Option<string> tolerance = Single("--tolerance", "EPS", "Relative accuracy wanted of every value; 1e-9 if not given.");
     private readonly Option<string> negligible = Single("--negligible", "VALUE", "Values below this need no relative accuracy; 1e-290 if not given.");
     private readonly Option<string[]> method = Repeatable("--method", "JOB=NAME", "Prescribes a method: transient=NAME, stationary=NAME or absorption=NAME.");
-    private readonly Option<string> threads = Single("--threads", "N", "How many threads may work; results do not depend on it.");
+    private readonly Option<string> threads = Single("--threads", "N", "How many threads may work; as many as there are processors if not given. Results do not depend on it.");
     private readonly Option<string> maxStates = Single("--max-states", "N", "Gives up beyond this many states.");
     private readonly Option<string> timeLimit = Single("--time-limit", "TIME", "Gives up after this time, for example 30s or \"5 min\".");
     private readonly Option<string> format;

@@ -99,7 +99,7 @@ internal sealed class ModelSession : IModelSession
             StationaryMethod = request.Methods.GetValueOrDefault("stationary"),
             AbsorptionMethod = request.Methods.GetValueOrDefault("absorption"),
             MaxStates = request.MaxStates ?? usual.MaxStates,
-            Threads = request.Threads ?? usual.Threads,
+            Threads = request.Threads ?? Environment.ProcessorCount,
             Progress = work.Progress,
         };
     }

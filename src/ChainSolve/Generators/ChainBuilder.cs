@@ -1,3 +1,4 @@
+using System.Globalization;
 using ChainSolve.Language.Diagnostics;
 using ChainSolve.Language.Text;
 using ChainSolve.Modelling;
@@ -33,6 +34,13 @@ internal static class ChainBuilder
         var states = layout.Bits <= 64
             ? new Explorer<ulong>(model, layout, finder).Explore(starts, options.MaxStates, context)
             : new Explorer<UInt128>(model, layout, finder).Explore(starts, options.MaxStates, context);
+        if (states.MostTransitions > Array.MaxLength)
+        {
+            throw new LimitExceededException("transitions", string.Create(
+                CultureInfo.InvariantCulture,
+                $"the {states.Count:N0} states of the model have {states.MostTransitions:N0} transitions, and {Array.MaxLength:N0} is the most that is kept; write alike things as one item with 'x N'"));
+        }
+
         var rows = GeneratorRows.Fill(states, finder, model.Variables.Count, model.Transitions.Count, context)
             ?? throw new InvalidOperationException("A state leads to one that was not explored.");
         var generator = Generator.FromRows(rows.Offsets, rows.Targets, rows.Rates);

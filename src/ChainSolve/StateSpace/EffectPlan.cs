@@ -20,6 +20,7 @@ internal sealed class EffectPlan
         Assignments = [.. transition.Effects.OfType<AssignEffect>().Select(a => (a.Variable, Amount.Of(a.Value, outputs)))];
         Program = outputs.Count == 0 ? null : ExprCompiler.Compile(outputs, ExprBackEnd.Interpreted);
         IsPlain = Moves.All(m => m.Targets.Length == 1);
+        Needs = FixedNeeds();
     }
 
     public BoundTransition Transition { get; }
@@ -33,6 +34,21 @@ internal sealed class EffectPlan
 
     /// <summary>Whether no target is drawn, so that there is one outcome.</summary>
     public bool IsPlain { get; }
+
+    /// <summary>
+    /// How many replicas have to be in which places, where the transition moves fixed numbers of replicas and does nothing else, so that
+    /// it changes the key of every state by the same amount; null for others.
+    /// </summary>
+    public (int Place, int Count)[]? Needs { get; }
+
+    private (int Place, int Count)[]? FixedNeeds()
+    {
+        var isFixed = IsPlain && Assignments.Length == 0
+            && Moves.All(m => m is { Count: { Output: < 0, Fixed: >= 0 and <= int.MaxValue } count, Effect.IfAny: false } && count.Fixed == Math.Floor(count.Fixed));
+        return isFixed
+            ? [.. Moves.GroupBy(m => m.Effect.From).Select(g => (g.Key, (int)Math.Min(int.MaxValue, g.Sum(m => m.Count!.Value.Fixed))))]
+            : null;
+    }
 }
 
 /// <summary>A line of replicas that move.</summary>

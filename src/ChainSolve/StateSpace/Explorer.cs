@@ -13,6 +13,7 @@ internal sealed class Explorer<TKey>(BoundModel model, StateLayout layout, Succe
 
     private readonly KeyCodec<TKey> codec = new(layout);
     private readonly KeyTable<TKey> table = new();
+    private readonly SuccessorKeys<TKey> keys = new(new KeyCodec<TKey>(layout), finder.Plans);
 
     /// <summary>The reachable states, numbered by their keys.</summary>
     /// <exception cref="LimitExceededException">There are more than the limit.</exception>
@@ -26,6 +27,7 @@ internal sealed class Explorer<TKey>(BoundModel model, StateLayout layout, Succe
 
         var current = new int[model.Variables.Count];
         var levelEnd = table.Count;
+        var transitions = 0L;
         (TKey Key, StateFaultException Fault)? first = null;
         for (var state = 0; state < table.Count; state++)
         {
@@ -41,16 +43,17 @@ internal sealed class Explorer<TKey>(BoundModel model, StateLayout layout, Succe
                 context.Progress?.Report(new SolveProgress("exploring", table.Count, 0, ""));
             }
 
-            codec.Unpack(table[state], current);
+            var key = table[state];
+            codec.Unpack(key, current);
             try
             {
                 finder.Find(current);
             }
             catch (StateFaultException fault)
             {
-                if (first is null || table[state] < first.Value.Key)
+                if (first is null || key < first.Value.Key)
                 {
-                    first = (table[state], fault);
+                    first = (key, fault);
                 }
 
                 continue;
@@ -58,7 +61,9 @@ internal sealed class Explorer<TKey>(BoundModel model, StateLayout layout, Succe
 
             for (var s = 0; s < finder.Successors.Count; s++)
             {
-                if (table.Add(codec.Pack(finder.Successors.Marking(s))) && table.Count > maxStates)
+                var next = keys.Of(key, finder.Successors, s);
+                transitions += next == key ? 0 : 1;
+                if (table.Add(next) && table.Count > maxStates)
                 {
                     throw new LimitExceededException("states", string.Create(
                         CultureInfo.InvariantCulture,
@@ -69,7 +74,7 @@ internal sealed class Explorer<TKey>(BoundModel model, StateLayout layout, Succe
 
         ThrowIfAny(first, starts);
         table.Sort();
-        return new KeyedStates<TKey>(codec, table);
+        return new KeyedStates<TKey>(codec, table, keys, transitions);
     }
 
     private void ThrowIfAny((TKey Key, StateFaultException Fault)? first, IReadOnlyList<(int[] Marking, double Probability)> starts)

@@ -38,6 +38,25 @@ internal sealed class KeyCodec<TKey>
         derived = [.. last];
     }
 
+    /// <summary>What one replica more in a place adds to a key.</summary>
+    private TKey UnitOf(int place)
+    {
+        foreach (var field in fields)
+        {
+            if (field.Kind == FieldKind.Place && place >= field.Variable && place < field.Variable + field.Places)
+            {
+                return TKey.CreateTruncating((uint)(place - field.Variable)) << field.Shift;
+            }
+
+            if (field.Kind == FieldKind.Count && place == field.Variable)
+            {
+                return TKey.One << field.Shift;
+            }
+        }
+
+        return TKey.Zero;
+    }
+
     public TKey Pack(ReadOnlySpan<int> marking)
     {
         var key = TKey.Zero;
@@ -50,6 +69,19 @@ internal sealed class KeyCodec<TKey>
         }
 
         return key;
+    }
+
+    /// <summary>What a transition that moves fixed numbers of replicas adds to every key, modulo the size of a key; zero for other transitions.</summary>
+    public TKey ShiftOf(EffectPlan plan)
+    {
+        var shift = TKey.Zero;
+        foreach (var move in plan.Needs is null ? [] : plan.Moves)
+        {
+            var count = TKey.CreateTruncating((uint)move.Count!.Value.Fixed);
+            shift = unchecked(shift + (count * UnitOf(move.Targets[0].To)) - (count * UnitOf(move.Effect.From)));
+        }
+
+        return shift;
     }
 
     public void Unpack(TKey key, Span<int> marking)

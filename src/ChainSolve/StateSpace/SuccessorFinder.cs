@@ -27,6 +27,9 @@ internal sealed class SuccessorFinder
 
     public SuccessorList Successors { get; }
 
+    /// <summary>The effects of each transition.</summary>
+    public IReadOnlyList<EffectPlan> Plans => plans;
+
     /// <summary>The rates of all transitions: 0 where the guard does not hold.</summary>
     public static IExprProgram RateProgram(BoundModel model, ExprBackEnd backEnd) => ExprCompiler.Compile(
         [.. model.Transitions.Select(t => t.Guard is null ? t.Rate : new ChooseNumberExpr(t.Guard, t.Rate, new ConstantExpr(0)))], backEnd);
@@ -51,7 +54,27 @@ internal sealed class SuccessorFinder
                     CultureInfo.InvariantCulture, $"the rate of {model.Transitions[t].Label} is {rate}; a rate is finite and not negative"));
             }
 
-            runner.Run(plans[t], t, rate, marking);
+            if (plans[t].Needs is { } needs && Has(marking, needs))
+            {
+                Successors.AddShift(rate, t);
+            }
+            else
+            {
+                runner.Run(plans[t], t, rate, marking);
+            }
         }
+    }
+
+    private static bool Has(ReadOnlySpan<int> marking, (int Place, int Count)[] needs)
+    {
+        foreach (var (place, count) in needs)
+        {
+            if (marking[place] < count)
+            {
+                return false;
+            }
+        }
+
+        return true;
     }
 }

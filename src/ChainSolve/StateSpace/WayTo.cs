@@ -20,6 +20,7 @@ internal sealed class WayTo<TKey>(BoundModel model, KeyCodec<TKey> codec, Succes
             }
         }
 
+        var keys = new SuccessorKeys<TKey>(codec, finder.Plans);
         var current = new int[model.Variables.Count];
         for (var state = 0; state < table.Count; state++)
         {
@@ -41,7 +42,7 @@ internal sealed class WayTo<TKey>(BoundModel model, KeyCodec<TKey> codec, Succes
 
             for (var s = 0; s < finder.Successors.Count; s++)
             {
-                if (table.Add(codec.Pack(finder.Successors.Marking(s))))
+                if (table.Add(keys.Of(table[state], finder.Successors, s)))
                 {
                     from.Add((state, finder.Successors.Transition(s)));
                 }
