@@ -1,4 +1,3 @@
-using System.Text;
 using Superpower.Model;
 using TextSpan = ChainSolve.Language.Text.TextSpan;
 
@@ -13,13 +12,9 @@ internal static class TokenExtensions
     public static string Words(this Token<TokenKind> token)
     {
         var text = token.ToStringValue();
-        return token.Kind == TokenKind.Name && !IsAscii(text) ? Normal(text) : text;
+        return token.Kind == TokenKind.Name ? NormalForm.Of(text) : text;
     }
 
     public static bool Is(this Token<TokenKind> token, string word) =>
         token.Kind == TokenKind.Name && token.Span.Length == word.Length && token.Span.EqualsValue(word);
-
-    private static bool IsAscii(string text) => text.All(char.IsAscii);
-
-    private static string Normal(string text) => text.IsNormalized(NormalizationForm.FormC) ? text : text.Normalize(NormalizationForm.FormC);
 }

@@ -41,5 +41,5 @@ internal static class Words
         or TokenKind.Plus or TokenKind.Minus or TokenKind.Star or TokenKind.Slash or TokenKind.Caret;
 
     /// <summary>Whether a token of this kind cannot begin a line.</summary>
-    public static bool IsNeverFirst(TokenKind kind) => kind is TokenKind.Minus || (IsJoining(kind) && kind is not TokenKind.Comma);
+    public static bool IsNeverFirst(TokenKind kind) => IsJoining(kind) && kind is not TokenKind.Comma;
 }

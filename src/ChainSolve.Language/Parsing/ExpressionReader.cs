@@ -54,12 +54,12 @@ internal sealed class ExpressionReader(TokenList<TokenKind> tokens)
     {
         var start = Take();
         Enter(start);
-        if (Chain(Level.Or) is not { } condition || !TakeWord("then", start))
+        if (Chain(Level.Or) is not { } condition || !TakeWord("then"))
         {
             return null;
         }
 
-        if (Whole() is not { } whenTrue || !TakeWord("else", start) || Whole() is not { } whenFalse)
+        if (Whole() is not { } whenTrue || !TakeWord("else") || Whole() is not { } whenFalse)
         {
             return null;
         }
@@ -74,7 +74,7 @@ internal sealed class ExpressionReader(TokenList<TokenKind> tokens)
         };
     }
 
-    private bool TakeWord(string word, Token<TokenKind> start)
+    private bool TakeWord(string word)
     {
         if (NextIs(word))
         {
@@ -83,7 +83,7 @@ internal sealed class ExpressionReader(TokenList<TokenKind> tokens)
         }
 
         throw new SyntaxFaultException(
-            TextCodes.Unexpected, Peek() is { } next ? next.Place() : start.Place(), $"expected '{word}' here; an 'if' is written 'if CONDITION then A else B'");
+            TextCodes.Unexpected, Peek() is { } next ? next.Place() : new TextSpan(taken.Place().End, 0), $"expected '{word}' here; an 'if' is written 'if CONDITION then A else B'");
     }
 
     private ExpressionSyntax? Chain(Level level)

@@ -92,6 +92,11 @@ internal static class StatementGrammar
     {
         var first = input.ConsumeToken().Value;
         LineStarts.Check(first);
+        if (first.Kind == TokenKind.CloseBrace)
+        {
+            throw new SyntaxFaultException(TextCodes.Unclosed, first.Place(), "this '}' closes nothing; remove it, or open a '{' before it");
+        }
+
         var word = first.Kind == TokenKind.Name ? first.Words() : "";
         if (ByWord.TryGetValue(word, out var parser))
         {

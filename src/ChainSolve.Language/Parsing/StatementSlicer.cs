@@ -28,7 +28,7 @@ internal sealed class StatementSlicer
             firstOnLine = token.Kind == TokenKind.LineEnd;
         }
 
-        slicer.End(null);
+        slicer.End();
         return slicer.slices;
     }
 
@@ -36,7 +36,7 @@ internal sealed class StatementSlicer
     {
         if (firstOnLine && braces.Count == 0 && current.Count > 0 && token.Kind == TokenKind.Name && Words.Statements.Contains(token.Words()))
         {
-            End(null);
+            End();
         }
 
         switch (token.Kind)
@@ -44,7 +44,7 @@ internal sealed class StatementSlicer
             case TokenKind.LineEnd when current.Count == 0 || brackets > 0 || Joins(current[^1]):
                 return;
             case TokenKind.LineEnd when braces.Count == 0:
-                End(null);
+                End();
                 return;
             case TokenKind.OpenBracket:
                 brackets++;
@@ -60,9 +60,9 @@ internal sealed class StatementSlicer
                 brackets = braces.Pop().OuterBrackets;
                 break;
             case TokenKind.CloseBrace:
-                End(null);
+                End();
                 current.Add(token);
-                End((token.Place(), "this '}' closes nothing; remove it, or open a '{' before it"));
+                End();
                 return;
         }
 
@@ -72,13 +72,11 @@ internal sealed class StatementSlicer
     private static bool Joins(Token<TokenKind> token) =>
         Words.IsJoining(token.Kind) || (token.Kind == TokenKind.Name && Words.Joining.Contains(token.Words()));
 
-    private void End((TextSpan Span, string Message)? fault)
+    private void End()
     {
-        if (braces.Count > 0)
-        {
-            fault = (braces.Peek().Brace.Place(), "this '{' is not closed; put a '}' behind its last clause");
-        }
-
+        (TextSpan Span, string Message)? fault = braces.Count > 0
+            ? (braces.Peek().Brace.Place(), "this '{' is not closed; put a '}' behind its last clause")
+            : null;
         if (current.Count > 0)
         {
             slices.Add(new StatementSlice([.. current], fault));
