@@ -78,7 +78,7 @@ public sealed partial class Model
     {
         var parsed = ModelParser.Parse(source);
         var hasTextFaults = parsed.Diagnostics.Any(d => d.Severity == Severity.Fault);
-        var bound = Binder.Bind(parsed.Model, hasTextFaults);
+        var bound = Binder.Bind(parsed.Model);
         var diagnostics = parsed.Diagnostics.Concat(bound.Diagnostics).OrderBy(d => d.Span.Start).ToList();
         if (hasTextFaults || bound.Model is not { } model)
         {

@@ -144,6 +144,11 @@ internal static class Grammar
 
             LineStarts.Check(next.Value);
             var value = clause(rest);
+            if (!value.HasValue && IsStatement(next))
+            {
+                throw new SyntaxFaultException(TextCodes.Unclosed, open.Value.Place(), "this '{' is not closed before the next statement; put a '}' behind its last clause");
+            }
+
             if (!value.HasValue)
             {
                 return TokenListParserResult.CastEmpty<TokenKind, T, IReadOnlyList<T>>(value);
@@ -158,6 +163,14 @@ internal static class Grammar
             }
         }
     };
+
+    // Inside braces the words of statements are names like others, unless no clause can begin so.
+    private static bool IsStatement(TokenListParserResult<TokenKind, Token<TokenKind>> first)
+    {
+        var second = first.Remainder.ConsumeToken();
+        return first.Value.Kind == TokenKind.Name && Words.Statements.Contains(first.Value.Words())
+            && second.HasValue && second.Value.Kind is TokenKind.Name or TokenKind.Text;
+    }
 
     public static TokenListParserResult<TokenKind, T?> Widen<T>(this TokenListParserResult<TokenKind, T> result)
         where T : class => result.HasValue

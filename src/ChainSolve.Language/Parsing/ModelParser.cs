@@ -22,15 +22,12 @@ public static class ModelParser
         var lexed = Lexer.Read(source);
         var faults = new List<Diagnostic>(lexed.Faults);
         var statements = new List<StatementSyntax>();
+        var unread = new HashSet<string>();
         foreach (var slice in StatementSlicer.Cut(lexed.Tokens))
         {
-            if (faults.Count > 4 * MostFaults)
+            if (faults.Count > 4 * MostFaults || HoldsFault(slice.Span, lexed.Faults))
             {
-                break;
-            }
-
-            if (HoldsFault(slice.Span, lexed.Faults))
-            {
+                unread.UnionWith(slice.Names);
                 continue;
             }
 
@@ -42,10 +39,11 @@ public static class ModelParser
             else
             {
                 faults.Add(fault!);
+                unread.UnionWith(slice.Names);
             }
         }
 
-        var model = new ModelSyntax { Source = source, Statements = statements, Comments = lexed.Comments };
+        var model = new ModelSyntax { Source = source, Statements = statements, Comments = lexed.Comments, UnreadNames = faults.Count > 0 ? unread : null };
         return new ParseResult(model, Limited(faults, source));
     }
 

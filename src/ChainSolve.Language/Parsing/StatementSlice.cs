@@ -12,5 +12,8 @@ internal sealed class StatementSlice(Token<TokenKind>[] tokens, (TextSpan Span, 
     /// <summary>What is wrong with the braces, if anything.</summary>
     public (TextSpan Span, string Message)? Fault { get; } = fault;
 
+    /// <summary>The names and words in it.</summary>
+    public IEnumerable<string> Names => Tokens.Where(t => t.Kind == TokenKind.Name).Select(t => t.Words());
+
     public TextSpan Span => TextSpan.Cover(Tokens[0].Place(), Tokens[^1].Place());
 }

@@ -126,8 +126,4 @@ internal static class BindingCodes
         new(SharedRepair, "memoryless repairs under a scarce crew"),
         new(MoreWarnings, "more warnings than are shown"),
     ];
-
-    /// <summary>Whether a fault may only be there because another statement could not be read.</summary>
-    public static bool IsChildOfTextFault(string code) =>
-        code is UnknownName or UnknownState or UnknownMove or UnknownFunction or NothingToModel or NoStates;
 }

@@ -8,8 +8,8 @@ namespace ChainSolve.Binding;
 /// since a body that several items share is bound for each.
 /// </summary>
 /// <param name="source">The text.</param>
-/// <param name="isPartial">Whether statements are missing because they could not be read: unknown names say nothing then.</param>
-internal sealed class FaultSink(SourceText source, bool isPartial = false)
+/// <param name="unread">The names in statements that could not be read; null where all were.</param>
+internal sealed class FaultSink(SourceText source, IReadOnlySet<string>? unread = null)
 {
     private const int Most = 20;
 
@@ -36,7 +36,7 @@ internal sealed class FaultSink(SourceText source, bool isPartial = false)
 
     public void Report(Fault fault)
     {
-        if (isPartial && BindingCodes.IsChildOfTextFault(fault.Code))
+        if (unread is not null && MayFollow(fault, unread))
         {
             return;
         }
@@ -56,6 +56,14 @@ internal sealed class FaultSink(SourceText source, bool isPartial = false)
             : (Shorten([.. warnings.OrderBy(w => w.Span.Start)], BindingFaults.MoreWarnings), Severity.Warning);
         return [.. told.Select(f => f.ToDiagnostic(source, severity))];
     }
+
+    /// <summary>Whether a fault may only be there because a statement could not be read.</summary>
+    private bool MayFollow(Fault fault, IReadOnlySet<string> names) => fault.Code switch
+    {
+        BindingCodes.UnknownName or BindingCodes.UnknownFunction => names.Contains(source.Slice(fault.Span)),
+        BindingCodes.NothingToModel or BindingCodes.NoStates => true,
+        _ => false,
+    };
 
     private List<Fault> Told(int unitUses, TextSpan? firstUnit) =>
         [.. FoldMissingUnits([.. faults], unitUses, firstUnit)

@@ -18,12 +18,12 @@ internal sealed class ModelBinding
     private readonly string? title;
     private readonly bool isPartial;
 
-    public ModelBinding(ModelSyntax syntax, bool isPartial)
+    public ModelBinding(ModelSyntax syntax)
     {
         this.syntax = syntax;
-        this.isPartial = isPartial;
+        isPartial = syntax.UnreadNames is not null;
         (unitUses, firstUnit) = UnitUses.In(syntax);
-        sink = new FaultSink(syntax.Source, isPartial);
+        sink = new FaultSink(syntax.Source, syntax.UnreadNames);
         var heading = new HeadingBinder(syntax, sink);
         title = heading.Title();
         context = new BindContext(syntax.Source, sink, heading.TimeBase(unitUses > 0, isPartial));

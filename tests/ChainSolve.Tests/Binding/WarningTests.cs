@@ -38,15 +38,17 @@ public sealed class WarningTests
         Assert.Equal(["3:9 B204 unknown name 'nowhere'"], Bound.Faults(Fan + "given a = 1\nlet b = nowhere"));
 
     [Fact]
-    public void Bind_TextWithFaults_DoesNotBlameNames()
+    public void Bind_TextWithFaults_BlamesNoNameThatMayBeDeclaredThere()
     {
         var parsed = ModelParser.Parse(new("test.chain", "given a = ) 1\n" + Fan + "let b = a + 3 h\nlet c = 3 h + 1\nlet d = nowhere"));
 
-        var result = Binder.Bind(parsed.Model, hasTextFaults: true);
+        var result = Binder.Bind(parsed.Model);
 
         Assert.NotEmpty(parsed.Diagnostics);
         Assert.Null(result.Model);
-        Assert.Equal("4:15 B230 these cannot be added or subtracted: '3 h' is a time and '1' is a plain number; write its unit, such as 1 h", Assert.Single(result.Diagnostics.Select(Bound.Show)));
+        Assert.Equal(
+            ["4:15 B230 these cannot be added or subtracted: '3 h' is a time and '1' is a plain number; write its unit, such as 1 h", "5:9 B204 unknown name 'nowhere'"],
+            result.Diagnostics.Select(Bound.Show));
     }
 
     [Fact]
@@ -54,7 +56,7 @@ public sealed class WarningTests
     {
         var parsed = ModelParser.Parse(new("test.chain", "given a = ) 1\ngiven b = 2\n" + Fan + "given c = a\nlet d = c"));
 
-        var result = Binder.Bind(parsed.Model, hasTextFaults: true);
+        var result = Binder.Bind(parsed.Model);
 
         Assert.Null(result.Model);
         Assert.Empty(result.Diagnostics);
