@@ -18,6 +18,9 @@ internal sealed record ExprScope
     /// <summary>Set in the statement of a given: only givens with a lower index are in reach.</summary>
     public int? GivensBelow { get; init; }
 
+    /// <summary>Names of another kind that may have been meant where a lone name is not known.</summary>
+    public IEnumerable<string> AlsoMeant { get; init; } = [];
+
     /// <summary>Set for texts from outside the model: no name is in reach.</summary>
     public bool NoNames { get; init; }
 

@@ -23,7 +23,7 @@ internal sealed partial class ExpressionBinder
 
         if (names.Find(name.Text) is not { } symbol)
         {
-            var known = names.Quantities.Concat(scope.Locals?.Keys ?? []);
+            var known = names.Quantities.Concat(scope.Locals?.Keys ?? []).Concat(scope.AlsoMeant);
             context.Report(BindingFaults.UnknownName(name, known, () => names.MemberHint(name.Text)));
             return null;
         }

@@ -57,7 +57,8 @@ internal sealed class MeasureBinder(BindContext context, NameTable names, Expres
             return reward is null ? null : (null, reward);
         }
 
-        var value = expressions.Bind(syntax.Subject, ExprScope.Top);
+        var scope = MeasureForms.TakesObject(syntax.Kind) ? ExprScope.Top with { AlsoMeant = names.NamesOf<RewardSymbol>() } : ExprScope.Top;
+        var value = expressions.Bind(syntax.Subject, scope);
         var condition = syntax.While is null ? null : expressions.BindCondition(syntax.While, ExprScope.Top, "'while'");
         if (value is null || (condition is null) != (syntax.While is null))
         {
