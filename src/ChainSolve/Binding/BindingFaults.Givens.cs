@@ -22,7 +22,7 @@ internal static partial class BindingFaults
         new(BindingCodes.OutOfRange, $"the range begins at {low} and ends before that, at {high}; exchange the ends", span);
 
     public static Fault NotFinite(TextSpan span, string name, double value) =>
-        new(BindingCodes.NotFinite, FormattableString.Invariant($"'{name}' comes out as {value:R}; a given has to be a finite number"), span);
+        new(BindingCodes.NotFinite, FormattableString.Invariant($"'{name}' comes out as {GivenText.Number(value)}; a given has to be a finite number"), span);
 
     public static Fault CrewNotWhole(TextSpan span, string name, double value) =>
         new(BindingCodes.NotWhole, FormattableString.Invariant($"crew '{name}' comes out with {value:R} members; that has to be a whole number from 0"), span);

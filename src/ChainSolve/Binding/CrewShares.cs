@@ -104,7 +104,10 @@ internal sealed class CrewShares
         // What reads the state is asked only where a replica is there to move.
         private static ConditionExpr Enabled(MoveDraft move)
         {
-            var runs = ExprNodes.Compare(Comparison.Greater, move.Rate.Expr, ExprNodes.Number(0));
+            // A rate without a value is told of where the move itself is looked at.
+            ConditionExpr runs = move.Rate.Expr is ConstantExpr rate
+                ? new TruthExpr(rate.Value > 0)
+                : new CompareExpr(Comparison.Greater, move.Rate.Expr, ExprNodes.Number(0)) { IsFalseIfUndefined = true };
             var guard = Transitions.GuardOf(move);
             return guard is null ? runs : ExprNodes.All([guard, runs]);
         }

@@ -38,7 +38,7 @@ internal static class ExprNodes
             {
                 kept.Add(factor);
             }
-            else if (kept is [{ IsDivided: false, Value: ConstantExpr before }])
+            else if (kept is [{ IsDivided: false, Value: ConstantExpr before }] && (constant.Value != 0 || !factor.IsDivided))
             {
                 kept[0] = new ProductFactor(Number(factor.IsDivided ? before.Value / constant.Value : before.Value * constant.Value), false);
             }

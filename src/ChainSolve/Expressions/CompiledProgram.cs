@@ -140,6 +140,7 @@ internal sealed class CompiledProgram : IExprProgram
 
         private static MethodInfo MethodOf(Operation operation) => operation switch
         {
+            Operation.DivideUnlessZero => ((Func<double, double, double>)ScalarMath.Divide).Method,
             Operation.Power => ((Func<double, double, double>)Math.Pow).Method,
             Operation.Min => ((Func<double, double, double>)Math.Min).Method,
             Operation.Max => ((Func<double, double, double>)Math.Max).Method,

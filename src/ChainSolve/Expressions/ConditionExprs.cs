@@ -14,6 +14,9 @@ internal sealed class CompareExpr(Comparison comparison, NumberExpr left, Number
     public NumberExpr Left { get; } = left;
 
     public NumberExpr Right { get; } = right;
+
+    /// <summary>Whether it is false where a side has no value; otherwise it has no value either.</summary>
+    public bool IsFalseIfUndefined { get; init; }
 }
 
 /// <summary>The comparisons.</summary>

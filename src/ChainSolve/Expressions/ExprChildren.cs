@@ -20,6 +20,31 @@ internal static class ExprChildren
         _ => [],
     };
 
+    /// <summary>The nodes of the graphs, each once and behind those it refers to.</summary>
+    public static List<Expr> ChildrenFirst(IEnumerable<Expr> roots)
+    {
+        var order = new List<Expr>();
+        var seen = new HashSet<Expr>(ReferenceEqualityComparer.Instance);
+        var open = new Stack<(Expr Expr, bool IsDone)>(roots.Reverse().Select(o => (o, false)));
+        while (open.TryPop(out var next))
+        {
+            if (next.IsDone)
+            {
+                order.Add(next.Expr);
+            }
+            else if (seen.Add(next.Expr))
+            {
+                open.Push((next.Expr, true));
+                foreach (var child in Of(next.Expr))
+                {
+                    open.Push((child, false));
+                }
+            }
+        }
+
+        return order;
+    }
+
     /// <summary>How often each node of the graphs is referred to, from outside or from other nodes.</summary>
     public static Dictionary<Expr, int> CountReferences(IEnumerable<Expr> roots)
     {

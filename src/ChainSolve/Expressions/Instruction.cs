@@ -23,6 +23,9 @@ internal enum Operation
     Subtract,
     Multiply,
     Divide,
+
+    /// <summary>As <see cref="Divide"/>; by zero it puts what is no number.</summary>
+    DivideUnlessZero,
     Power,
     Min,
     Max,

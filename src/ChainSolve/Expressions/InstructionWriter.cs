@@ -4,12 +4,18 @@ namespace ChainSolve.Expressions;
 /// Turns expressions into instructions. A node that is referred to more than once gets a slot and is evaluated once, before the outputs;
 /// as arithmetic on doubles never throws, it does no harm where its value is not needed.
 /// </summary>
+/// <remarks>
+/// Division by zero gives no number, and so does all that is made of it: a condition that needs a number which is not there is neither 1 nor
+/// 0, and a choice by it gives no number either. So nothing undefined can hide behind a comparison.
+/// </remarks>
 internal sealed class InstructionWriter
 {
     private readonly IReadOnlyList<Expr> outputs;
     private readonly Dictionary<Expr, int> references;
     private readonly Dictionary<Expr, int> slots = new(ReferenceEqualityComparer.Instance);
+    private readonly HashSet<Expr> undefined;
     private readonly List<Instruction> instructions = [];
+    private int slotCount;
     private int depth;
     private int deepest;
 
@@ -17,15 +23,15 @@ internal sealed class InstructionWriter
     {
         this.outputs = outputs;
         references = ExprChildren.CountReferences(outputs);
+        undefined = UndefinedValues.Of(outputs);
     }
 
     public InstructionList Write()
     {
-        foreach (var shared in SharedChildrenFirst())
+        foreach (var shared in ExprChildren.ChildrenFirst(outputs).Where(e => references[e] > 1 && !IsLeaf(e)))
         {
             PutValue(shared);
-            slots.Add(shared, slots.Count);
-            Add(Operation.Store, -1, slots.Count - 1);
+            slots.Add(shared, Keep());
         }
 
         for (var i = 0; i < outputs.Count; i++)
@@ -34,37 +40,10 @@ internal sealed class InstructionWriter
             Add(Operation.Output, -1, i);
         }
 
-        return new InstructionList([.. instructions], slots.Count, deepest, outputs.Count);
+        return new InstructionList([.. instructions], slotCount, deepest, outputs.Count);
     }
 
     private static bool IsLeaf(Expr expr) => expr is ConstantExpr or TruthExpr or GivenExpr or VariableExpr;
-
-    private List<Expr> SharedChildrenFirst()
-    {
-        var order = new List<Expr>();
-        var seen = new HashSet<Expr>(ReferenceEqualityComparer.Instance);
-        var open = new Stack<(Expr Expr, bool IsDone)>(outputs.Reverse().Select(o => (o, false)));
-        while (open.TryPop(out var next))
-        {
-            if (next.IsDone)
-            {
-                if (references[next.Expr] > 1 && !IsLeaf(next.Expr))
-                {
-                    order.Add(next.Expr);
-                }
-            }
-            else if (seen.Add(next.Expr))
-            {
-                open.Push((next.Expr, true));
-                foreach (var child in ExprChildren.Of(next.Expr))
-                {
-                    open.Push((child, false));
-                }
-            }
-        }
-
-        return order;
-    }
 
     private void Put(Expr expr)
     {
@@ -136,14 +115,12 @@ internal sealed class InstructionWriter
                 PutChoice(choose.Condition, choose.WhenTrue, choose.WhenFalse);
                 break;
             case CompareExpr compare:
-                Put(compare.Left);
-                Put(compare.Right);
-                Add(Operation.Equal + (int)compare.Comparison, -1);
+                PutComparison(compare);
                 break;
             case NotExpr not:
+                Constant(1);
                 Put(not.Operand);
-                Constant(0);
-                Add(Operation.Equal, -1);
+                Add(Operation.Subtract, -1);
                 break;
             case AllExpr all:
                 PutRun(all.Operands, Operation.JumpIfFalse);
@@ -190,7 +167,7 @@ internal sealed class InstructionWriter
             Put(factor.Value);
             if (i > 0 || factor.IsDivided)
             {
-                Add(factor.IsDivided ? Operation.Divide : Operation.Multiply, -1);
+                Add(!factor.IsDivided ? Operation.Multiply : factor.Value is ConstantExpr { Value: not 0 } ? Operation.Divide : Operation.DivideUnlessZero, -1);
             }
         }
     }
@@ -224,11 +201,44 @@ internal sealed class InstructionWriter
         }
     }
 
+    private void PutComparison(CompareExpr compare)
+    {
+        if (compare.IsFalseIfUndefined || !undefined.Contains(compare))
+        {
+            Put(compare.Left);
+            Put(compare.Right);
+            Add(Operation.Equal + (int)compare.Comparison, -1);
+            return;
+        }
+
+        // Zero times a number is added, which changes nothing, or zero times what is no number.
+        Put(compare.Left);
+        var left = Keep();
+        Put(compare.Right);
+        var right = Keep();
+        Add(Operation.Load, 1, left);
+        Add(Operation.Load, 1, right);
+        Add(Operation.Equal + (int)compare.Comparison, -1);
+        foreach (var side in new[] { left, right })
+        {
+            Add(Operation.Load, 1, side);
+            Constant(0);
+            Add(Operation.Multiply, -1);
+            Add(Operation.Add, -1);
+        }
+    }
+
     private void PutChoice(Expr condition, Expr whenTrue, Expr whenFalse)
     {
-        Put(condition);
+        var kept = PutCondition(condition);
         var toFalse = Hold(-1);
         Put(whenTrue);
+        if (kept is { } slot)
+        {
+            Add(Operation.Load, 1, slot);
+            Add(Operation.Multiply, -1);
+        }
+
         var toEnd = Hold(0);
         Fill(toFalse, Operation.JumpIfFalse);
         depth--;
@@ -238,19 +248,59 @@ internal sealed class InstructionWriter
 
     private void PutRun(IReadOnlyList<ConditionExpr> operands, Operation jump)
     {
-        var exits = new List<int>();
+        var exits = new List<(int At, int? Kept)>();
         foreach (var operand in operands)
         {
-            Put(operand);
-            exits.Add(Hold(-1));
+            var kept = PutCondition(operand);
+            exits.Add((Hold(-1), kept));
         }
 
+        // All that were passed held, so that their product is 1; of those passed by the other run none did.
         Constant(jump == Operation.JumpIfFalse ? 1 : 0);
-        var toEnd = Hold(0);
-        exits.ForEach(exit => Fill(exit, jump));
+        foreach (var slot in exits.Select(e => e.Kept).OfType<int>().Where(_ => jump == Operation.JumpIfFalse))
+        {
+            Add(Operation.Load, 1, slot);
+            Add(Operation.Multiply, -1);
+        }
+
+        var toEnd = new List<int> { Hold(0) };
+        foreach (var exit in exits.Where(e => e.Kept is not null && jump == Operation.JumpIfTrue))
+        {
+            Fill(exit.At, jump);
+            depth--;
+            Add(Operation.Load, 1, exit.Kept!.Value);
+            toEnd.Add(Hold(0));
+        }
+
+        foreach (var exit in exits.Where(e => e.Kept is null || jump == Operation.JumpIfFalse))
+        {
+            Fill(exit.At, jump);
+        }
+
         depth--;
         Constant(jump == Operation.JumpIfFalse ? 0 : 1);
-        Fill(toEnd, Operation.Jump);
+        toEnd.ForEach(at => Fill(at, Operation.Jump));
+    }
+
+    /// <summary>Puts a condition; the slot that keeps it where it may be neither 1 nor 0.</summary>
+    private int? PutCondition(Expr condition)
+    {
+        Put(condition);
+        if (!undefined.Contains(condition))
+        {
+            return null;
+        }
+
+        var slot = Keep();
+        Add(Operation.Load, 1, slot);
+        return slot;
+    }
+
+    /// <summary>Takes the number on top into a slot of its own.</summary>
+    private int Keep()
+    {
+        Add(Operation.Store, -1, slotCount);
+        return slotCount++;
     }
 
     // A jump whose target is not known yet.

@@ -75,6 +75,7 @@ internal sealed class InterpretedProgram(InstructionList list) : IExprProgram
         Operation.Subtract => x - y,
         Operation.Multiply => x * y,
         Operation.Divide => x / y,
+        Operation.DivideUnlessZero => ScalarMath.Divide(x, y),
         Operation.Power => Math.Pow(x, y),
         Operation.Min => Math.Min(x, y),
         Operation.Max => Math.Max(x, y),

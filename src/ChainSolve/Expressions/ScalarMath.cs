@@ -3,6 +3,9 @@ namespace ChainSolve.Expressions;
 /// <summary>The functions of the notation that the framework lacks in this form.</summary>
 internal static class ScalarMath
 {
+    /// <summary>The quotient; NaN where the divisor is zero.</summary>
+    public static double Divide(double x, double y) => y == 0 ? double.NaN : x / y;
+
     /// <summary>Rounds to the nearest whole number, halves away from zero.</summary>
     public static double Round(double x) => Math.Round(x, MidpointRounding.AwayFromZero);
 

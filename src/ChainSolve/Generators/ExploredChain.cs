@@ -49,20 +49,7 @@ internal sealed class ExploredChain : Chain
     public override double[] Evaluate(NumberExpr expression, CancellationToken cancellation)
     {
         var values = new double[States.Count];
-        ForEach(expression, (state, value) =>
-        {
-            if (!double.IsFinite(value))
-            {
-                throw new ModelFaultsException([new Diagnostic(
-                    StateCodes.Value,
-                    Severity.Fault,
-                    string.Create(CultureInfo.InvariantCulture, $"a value that a measure needs is {value} in the state '{Describe(state)}'; a value is finite: look for a division by zero"),
-                    new TextSpan(0, 0),
-                    Model.Source)]);
-            }
-
-            values[state] = value;
-        }, cancellation);
+        ForEach(expression, (state, value) => values[state] = value, cancellation);
         return values;
     }
 
@@ -94,6 +81,16 @@ internal sealed class ExploredChain : Chain
 
             States.ReadMarking(state, marking);
             program.Run(marking, Givens.AsSpan(), value);
+            if (!double.IsFinite(value[0]))
+            {
+                throw new ModelFaultsException([new Diagnostic(
+                    StateCodes.Value,
+                    Severity.Fault,
+                    string.Create(CultureInfo.InvariantCulture, $"a value that this measure needs {(double.IsNaN(value[0]) ? "does not exist" : $"is {value[0]}")} in the state '{Describe(state)}'; look for a division by zero or the logarithm of zero"),
+                    new TextSpan(0, 0),
+                    Model.Source)]);
+            }
+
             take(state, value[0]);
         }
     }

@@ -27,7 +27,15 @@ internal sealed class MeasurePlan
         foreach (var ask in asks)
         {
             context.Solve.Cancellation.ThrowIfCancellationRequested();
-            planner.Add(ask);
+            try
+            {
+                planner.Add(ask);
+            }
+            catch (ModelFaultsException exception)
+            {
+                // States know nothing of measures: the place is put in here.
+                throw new ModelFaultsException([.. exception.Faults.Select(f => f with { Span = ask.Measure.Span })]);
+            }
         }
 
         return new MeasurePlan(asks, planner.Groups());

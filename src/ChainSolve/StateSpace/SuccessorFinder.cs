@@ -51,7 +51,8 @@ internal sealed class SuccessorFinder
             if (!(rate > 0) || double.IsInfinity(rate))
             {
                 throw new StateFaultException(StateCodes.Rate, model.Transitions[t], string.Create(
-                    CultureInfo.InvariantCulture, $"the rate of {model.Transitions[t].Label} is {rate}; a rate is finite and not negative"));
+                    CultureInfo.InvariantCulture,
+                    $"the rate of {model.Transitions[t].Label} {(double.IsNaN(rate) ? "has no value, or its condition has none: look for a division by zero" : $"is {rate}")}; a rate is finite and not negative"));
             }
 
             if (plans[t].Needs is { } needs && Has(marking, needs))

@@ -130,7 +130,7 @@ public sealed class GivenResolverTests
     [Fact]
     public void Resolve_NotFinite_IsAFault() =>
         Assert.Equal(
-            ["1:1 B283 'fix' comes out as NaN; a given has to be a finite number"],
+            ["1:1 B283 'fix' comes out as no number; a given has to be a finite number"],
             new GivenResolver(Bound.Model(Store)).Resolve([GivenSetting.Of("fix", double.NaN)]).Faults.Select(Bound.Show));
 
     [Fact]

@@ -62,7 +62,7 @@ public sealed class GivenTests
 
     [Fact]
     public void Bind_ValueThatIsNotFinite_IsAFault() =>
-        Assert.Equal(["1:7 B283 'x' comes out as Infinity; a given has to be a finite number"], Bound.Faults("given x = 1/(2 - 2)\n" + Fan));
+        Assert.Equal(["1:7 B283 'x' comes out as no number; a given has to be a finite number"], Bound.Faults("given x = 1/(2 - 2)\n" + Fan));
 
     [Theory]
     [InlineData("given a = b\ngiven b = 1", "1:11 B211 'b' is declared below; a given may use numbers and the givens above it")]

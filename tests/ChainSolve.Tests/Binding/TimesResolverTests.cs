@@ -57,8 +57,8 @@ public sealed class TimesResolverTests
 
     [Theory]
     [InlineData("-(3 h)", "B273 this time is -3 h; times are finite and not negative")]
-    [InlineData("1/0 * 1 h", "B273 this time is Infinity h; times are finite and not negative")]
-    [InlineData("0/0 * 1 h", "B273 this time is NaN h; times are finite and not negative")]
+    [InlineData("1/0 * 1 h", "B273 this time is no number; times are finite and not negative")]
+    [InlineData("0/0 * 1 h", "B273 this time is no number; times are finite and not negative")]
     [InlineData("0 h .. 5 h step 0 h", "B274 the step is 0 h; it has to be above 0")]
     [InlineData("0 h .. 5 h step -(1 h)", "B274 the step is -1 h; it has to be above 0")]
     [InlineData("0 h .. 5 h log 3", "B275 with 'log' times begin above 0, not at 0 h")]
