@@ -12,6 +12,9 @@ internal sealed class ConvergenceWatch
     private const double Rough = 1e-12;
     private const double Unit = 1.12e-16;
 
+    // Errors of over-relaxed sweeps turn as they shrink: for so many batches they may seem to stand still.
+    private const int TurningSteps = 8;
+
     // Batches until the speed of a relaxation shows.
     private const int TrialSteps = 4;
     private const double RelaxationStep = 0.1;
@@ -23,6 +26,8 @@ internal sealed class ConvergenceWatch
     private readonly double sweepRounding;
     private double relaxation = 1;
     private double spread;
+    private double lowestSpread = double.PositiveInfinity;
+    private int spreadStandstill;
     private double change = double.PositiveInfinity;
     private double bestContraction = double.PositiveInfinity;
     private double bestRelaxation = 1;
@@ -48,7 +53,7 @@ internal sealed class ConvergenceWatch
     /// <summary>The error that is left, relative, for the worst probability.</summary>
     public double Error => Contraction >= 1
         ? double.PositiveInfinity
-        : (overRelaxes ? 64 : 4) * (((change * Contraction) + sweepRounding) / (1 - Contraction) + spread);
+        : (overRelaxes ? 1024 : 8) * (((change * Contraction) + sweepRounding) / (1 - Contraction) + spread);
 
     public bool IsDone { get; private set; }
 
@@ -90,7 +95,9 @@ internal sealed class ConvergenceWatch
             }
 
             // Close to its own rounding the spread stands still; what it has reached counts towards the error.
-            isSpent = next <= Spent || (next < Rough && next > 0.97 * spread);
+            spreadStandstill = next > 0.97 * lowestSpread ? spreadStandstill + 1 : 0;
+            lowestSpread = Math.Min(lowestSpread, next);
+            isSpent = next <= Spent || (next < Rough && spreadStandstill >= (overRelaxes ? TurningSteps : 1));
             spread = next;
             Relax();
         }
@@ -106,7 +113,7 @@ internal sealed class ConvergenceWatch
         // It stands still where it gains less than half of what the contraction promises.
         standstill = change > before * (1 + Math.Pow(Contraction, batch)) / 2 ? standstill + 1 : 0;
         IsDone = isSpent && Contraction < 1
-            && (change * Contraction <= sweepRounding / 4 || (standstill >= 3 && change < 1e-12));
+            && (change * Contraction <= sweepRounding / 4 || (standstill >= (overRelaxes ? TurningSteps : 3) && change < 1e-12));
     }
 
     /// <summary>Raises the relaxation step by step as long as that speeds up, and steps back when it no longer does.</summary>
@@ -122,8 +129,8 @@ internal sealed class ConvergenceWatch
             // The errors grew. What the weights are now is a new beginning, and the adjoint vector begins anew with them.
             Settle(isSettled ? 1 + ((relaxation - 1) / 2) : bestRelaxation);
             sweeps.RestartAdjoint();
-            spread = spreadAtSettling = sweeps.Spread();
-            isSpent = false;
+            spread = spreadAtSettling = lowestSpread = sweeps.Spread();
+            (isSpent, spreadStandstill) = (false, 0);
             return;
         }
 

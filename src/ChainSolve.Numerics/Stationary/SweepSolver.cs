@@ -6,10 +6,12 @@ namespace ChainSolve.Numerics.Stationary;
 
 /// <summary>Gauss-Seidel sweeps, or with over-relaxation, for chains that are too large to be eliminated.</summary>
 /// <remarks>
-/// The error is judged by three figures, and their sum is taken four times (sixty-four with over-relaxation, whose errors turn as they shrink): the last relative change of any probability over
-/// one less the contraction, the spread of the adjoint vector after as many cycles, and the rounding of one sweep over
-/// one less the contraction. The contraction is that of the adjoint vector late in the run, when only its slowest
-/// direction is left. The bound is estimated.
+/// The error is judged by three figures: the last relative change of any probability over one less the contraction, the
+/// spread of the adjoint vector after as many cycles, and the rounding of one sweep over one less the contraction. Their
+/// sum is taken eight times, and 1024 times with over-relaxation, whose errors turn as they shrink and whose roundings grow
+/// before they do: on 100,000 random chains the error came to 0.37 of half the one and to 0.31 of a quarter of the other.
+/// The contraction is that of the adjoint vector late in the run, when only its slowest direction is left. The bound is
+/// estimated.
 /// </remarks>
 internal sealed class SweepSolver(string name, bool overRelaxes) : IStationarySolver
 {
