@@ -135,19 +135,29 @@ internal sealed class EffectRunner(BoundModel model, StateLayout layout, double[
             return;
         }
 
+        // What is left for a target and all behind it, added from the end so that small chances keep their digits.
         var chances = ChancesOf(plan, move);
+        var rest = (double[])chances.Clone();
+        for (var i = rest.Length - 2; i >= 0; i--)
+        {
+            rest[i] += rest[i + 1];
+        }
+
         Share(0, counts[line], rate);
 
         void Share(int target, int remaining, double weight)
         {
             if (target == chances.Length - 1 || remaining == 0)
             {
-                weight *= Math.Pow(chances[target], remaining);
-                if (weight > 0)
+                Take(target, remaining, weight);
+                return;
+            }
+
+            if (remaining == 1)
+            {
+                for (var t = target; t < chances.Length; t++)
                 {
-                    after[move.Targets[target].To] += remaining;
-                    Draw(plan, counts, line + 1, transition, weight);
-                    after[move.Targets[target].To] -= remaining;
+                    Take(t, 1, weight * (chances[t] / rest[target]));
                 }
 
                 return;
@@ -155,13 +165,23 @@ internal sealed class EffectRunner(BoundModel model, StateLayout layout, double[
 
             for (var taken = 0; taken <= remaining; taken++)
             {
-                var chance = Expressions.ScalarMath.Choose(remaining, taken) * Math.Pow(chances[target], taken);
+                var chance = BinomialLaw.Chance(remaining, taken, chances[target] / rest[target], rest[target + 1] / rest[target]);
                 if (chance > 0)
                 {
                     after[move.Targets[target].To] += taken;
                     Share(target + 1, remaining - taken, weight * chance);
                     after[move.Targets[target].To] -= taken;
                 }
+            }
+        }
+
+        void Take(int target, int taken, double weight)
+        {
+            if (weight > 0)
+            {
+                after[move.Targets[target].To] += taken;
+                Draw(plan, counts, line + 1, transition, weight);
+                after[move.Targets[target].To] -= taken;
             }
         }
     }
