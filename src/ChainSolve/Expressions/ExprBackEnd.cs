@@ -1,11 +1,14 @@
 namespace ChainSolve.Expressions;
 
-/// <summary>How expressions are evaluated. Both ways give the same digits.</summary>
+/// <summary>How expressions are evaluated. All ways give the same digits.</summary>
 internal enum ExprBackEnd
 {
-    /// <summary>As a compiled method where dynamic code is compiled, interpreted elsewhere.</summary>
+    /// <summary>Interpreted at first, and as a compiled method once that pays; where dynamic code is not compiled, interpreted throughout.</summary>
     Fastest,
 
-    /// <summary>By a loop over the instructions: nothing to compile, for a few evaluations and where dynamic code is not available.</summary>
+    /// <summary>As a compiled method from the beginning.</summary>
+    Compiled,
+
+    /// <summary>By a loop over the instructions: nothing to compile.</summary>
     Interpreted,
 }

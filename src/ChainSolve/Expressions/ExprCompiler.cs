@@ -12,8 +12,11 @@ internal static class ExprCompiler
     public static IExprProgram Compile(IReadOnlyList<Expr> outputs, ExprBackEnd backEnd = ExprBackEnd.Fastest)
     {
         var list = InstructionList.Of(outputs);
-        return backEnd == ExprBackEnd.Fastest && RuntimeFeature.IsDynamicCodeCompiled && list.Instructions.Length <= LongestMethod
-            ? CompiledProgram.Of(list)
-            : new InterpretedProgram(list);
+        return backEnd switch
+        {
+            ExprBackEnd.Compiled => CompiledProgram.Of(list),
+            ExprBackEnd.Fastest when RuntimeFeature.IsDynamicCodeCompiled && list.Instructions.Length <= LongestMethod => new GrowingProgram(list),
+            _ => new InterpretedProgram(list),
+        };
     }
 }

@@ -1,12 +1,12 @@
 namespace ChainSolve.Expressions;
 
-/// <summary>A list of expressions made ready to be evaluated together. Immutable; safe to share between threads.</summary>
+/// <summary>A list of expressions made ready to be evaluated together. Safe to share between threads.</summary>
 internal interface IExprProgram
 {
     /// <summary>The number of expressions.</summary>
     int OutputCount { get; }
 
-    /// <summary>Evaluates all of them; conditions give 1 or 0. Division by zero gives an infinity or a NaN, as in IEEE arithmetic.</summary>
+    /// <summary>Evaluates all of them; conditions give 1 or 0. Division by zero gives NaN, and so does what is made of it.</summary>
     /// <param name="marking">One entry a variable; may be empty where no expression reads the state.</param>
     /// <param name="givens">One entry a given.</param>
     /// <param name="outputs">One entry an expression.</param>

@@ -69,7 +69,7 @@ internal sealed class ExploredChain : Chain
 
     private void ForEach(Expr expression, Action<int, double> take, CancellationToken cancellation)
     {
-        var program = ExprCompiler.Compile([expression], States.Count < StatesBetweenLooks ? ExprBackEnd.Interpreted : options.BackEnd);
+        var program = ExprCompiler.Compile([expression], options.BackEnd);
         var marking = new int[Model.Variables.Count];
         Span<double> value = stackalloc double[1];
         for (var state = 0; state < States.Count; state++)

@@ -18,7 +18,7 @@ internal sealed class EffectPlan
                 [.. m.Targets.Select(t => (t.To, t.Probability is null ? new Amount(1, -1) : Amount.Of(t.Probability, outputs)))])),
         ];
         Assignments = [.. transition.Effects.OfType<AssignEffect>().Select(a => (a.Variable, Amount.Of(a.Value, outputs)))];
-        Program = outputs.Count == 0 ? null : ExprCompiler.Compile(outputs, ExprBackEnd.Interpreted);
+        Program = outputs.Count == 0 ? null : ExprCompiler.Compile(outputs);
         IsPlain = Moves.All(m => m.Targets.Length == 1);
         Needs = FixedNeeds();
     }

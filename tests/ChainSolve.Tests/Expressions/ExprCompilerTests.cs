@@ -25,6 +25,7 @@ public class ExprCompilerTests
 
     [Theory]
     [InlineData(ExprBackEnd.Fastest)]
+    [InlineData(ExprBackEnd.Compiled)]
     [InlineData(ExprBackEnd.Interpreted)]
     internal void Compile_DoublingLetChain_StaysLinear(ExprBackEnd backEnd)
     {
@@ -56,9 +57,24 @@ public class ExprCompilerTests
     }
 
     [Fact]
+    public void Run_Often_KeepsItsDigits()
+    {
+        var exprs = new RandomExprs(5).Make(30);
+        var program = ExprCompiler.Compile(exprs);
+        Assert.IsType<GrowingProgram>(program);
+        var (first, later) = (new double[exprs.Count], new double[exprs.Count]);
+        program.Run([1, 2, 7], [0.25, 3], first);
+        for (var k = 0; k < 10_000; k++)
+        {
+            program.Run([1, 2, 7], [0.25, 3], later);
+            Assert.Equal(first, later);
+        }
+    }
+
+    [Fact]
     public void Run_OutputsTooShort_Throws()
     {
-        var program = ExprCompiler.Compile([new ConstantExpr(1), new ConstantExpr(2)]);
+        var program = ExprCompiler.Compile([new ConstantExpr(1), new ConstantExpr(2)], ExprBackEnd.Compiled);
         Assert.Throws<ArgumentOutOfRangeException>(() => program.Run([], [], new double[1]));
     }
 
