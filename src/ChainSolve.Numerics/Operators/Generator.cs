@@ -26,7 +26,7 @@ public sealed class Generator
         if (double.IsInfinity(MaxExitRate))
         {
             throw new ArgumentException(
-                $"The rates out of state {Array.IndexOf(ExitRates, MaxExitRate)} add up to more than a double holds. Choose a larger unit of time.");
+                $"The rates out of state {Array.IndexOf(ExitRates, MaxExitRate)} add up to more than a double holds. Choose a shorter unit of time.");
         }
     }
 

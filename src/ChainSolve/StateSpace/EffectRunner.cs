@@ -58,6 +58,11 @@ internal sealed class EffectRunner(BoundModel model, StateLayout layout, double[
         {
             var value = amount.Read(outputs);
             var name = model.Variables[variable].Name;
+            if (double.IsNaN(value))
+            {
+                throw Missing(plan, StateCodes.CounterNotWhole, $"the new value of {name}");
+            }
+
             if (!double.IsFinite(value) || Math.Abs(value - Math.Round(value)) > WholeSlack)
             {
                 throw Fault(plan, StateCodes.CounterNotWhole, $"{plan.Transition.Label} would set {name} to {value}, which is not a whole number");
@@ -91,6 +96,11 @@ internal sealed class EffectRunner(BoundModel model, StateLayout layout, double[
             }
 
             var wanted = amount.Read(outputs);
+            if (double.IsNaN(wanted))
+            {
+                throw Missing(plan, StateCodes.MoveCount, $"the number of replicas that leave {NameOf(move)}");
+            }
+
             if (!(wanted >= -WholeSlack) || Math.Abs(wanted - Math.Round(wanted)) > WholeSlack)
             {
                 throw Fault(plan, StateCodes.MoveCount, $"{plan.Transition.Label} would move {wanted} replicas out of {NameOf(move)}; the number is whole and not negative");
@@ -193,6 +203,11 @@ internal sealed class EffectRunner(BoundModel model, StateLayout layout, double[
         for (var i = 0; i < chances.Length; i++)
         {
             chances[i] = move.Targets[i].Probability.Read(outputs);
+            if (double.IsNaN(chances[i]))
+            {
+                throw Missing(plan, StateCodes.Probability, $"the probability of {model.Variables[move.Targets[i].To].Name}");
+            }
+
             if (!(chances[i] >= 0))
             {
                 throw Fault(plan, StateCodes.Probability, $"{plan.Transition.Label} would go to {model.Variables[move.Targets[i].To].Name} with the probability {chances[i]}; a probability is not negative");
@@ -215,6 +230,9 @@ internal sealed class EffectRunner(BoundModel model, StateLayout layout, double[
     }
 
     private string NameOf(MovePlan move) => model.Variables[move.Effect.From].Name;
+
+    private static StateFaultException Missing(EffectPlan plan, string code, string what) =>
+        Fault(plan, code, $"{plan.Transition.Label}: {what} does not exist; look for a division by zero");
 
     private static StateFaultException Fault(EffectPlan plan, string code, FormattableString message) =>
         new(code, plan.Transition, message.ToString(CultureInfo.InvariantCulture));

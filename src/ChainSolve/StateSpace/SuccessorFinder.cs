@@ -7,6 +7,9 @@ namespace ChainSolve.StateSpace;
 /// <summary>Finds what can happen in a state and where it leads. Holds buffers: belongs to one thread.</summary>
 internal sealed class SuccessorFinder
 {
+    // Room for what solvers add to the sum of the rates out of a state.
+    private const double LargestSum = 1e308;
+
     private readonly BoundModel model;
     private readonly double[] givens;
     private readonly IExprProgram rateProgram;
@@ -40,6 +43,7 @@ internal sealed class SuccessorFinder
     {
         Successors.Clear();
         rateProgram.Run(marking, givens, rates);
+        var sum = 0.0;
         for (var t = 0; t < rates.Length; t++)
         {
             var rate = rates[t];
@@ -53,6 +57,13 @@ internal sealed class SuccessorFinder
                 throw new StateFaultException(StateCodes.Rate, model.Transitions[t], string.Create(
                     CultureInfo.InvariantCulture,
                     $"the rate of {model.Transitions[t].Label} {(double.IsNaN(rate) ? "has no value, or its condition has none: look for a division by zero" : $"is {rate}")}; a rate is finite and not negative"));
+            }
+
+            sum += rate;
+            if (sum > LargestSum)
+            {
+                throw new StateFaultException(StateCodes.Rate, model.Transitions[t], string.Create(
+                    CultureInfo.InvariantCulture, $"with the rate of {model.Transitions[t].Label} the rates out of a state add to more than {LargestSum}; choose a shorter unit of time"));
             }
 
             if (plans[t].Needs is { } needs && Has(marking, needs))
