@@ -29,8 +29,8 @@ internal static class ChainBuilder
                 model.Source)]);
         }
 
-        var finder = new SuccessorFinder(model, givens, layout, SuccessorFinder.RateProgram(model, options.BackEnd));
-        var starts = StartMarkings.Of(model, givens);
+        var finder = new SuccessorFinder(model, givens, layout, SuccessorFinder.RateProgram(model, options.BackEnd), context.Cancellation);
+        var starts = StartMarkings.Of(model, givens, options.MaxStates);
         var states = layout.Bits <= 64
             ? new Explorer<ulong>(model, layout, finder).Explore(starts, options.MaxStates, context)
             : new Explorer<UInt128>(model, layout, finder).Explore(starts, options.MaxStates, context);
@@ -65,7 +65,7 @@ internal static class ChainBuilder
             }
         }
 
-        var finder = new SuccessorFinder(model, givens, StateLayout.Of(model, givens), SuccessorFinder.RateProgram(model, options.BackEnd));
+        var finder = new SuccessorFinder(model, givens, StateLayout.Of(model, givens), SuccessorFinder.RateProgram(model, options.BackEnd), context.Cancellation);
         try
         {
             var rows = GeneratorRows.Fill(chain.States, finder, model.Variables.Count, model.Transitions.Count, context);

@@ -20,7 +20,7 @@ internal sealed class ExploredChain : Chain
     {
         (Model, Givens, States, Rows, Generator, IsRefilled, this.options) = (model, givens, states, rows, generator, isRefilled, options);
         Start = new double[states.Count];
-        foreach (var (marking, probability) in StartMarkings.Of(model, givens))
+        foreach (var (marking, probability) in StartMarkings.Of(model, givens, options.MaxStates))
         {
             Start[states.Find(marking)] += probability;
         }

@@ -4,10 +4,11 @@ using ChainSolve.Modelling;
 namespace ChainSolve.StateSpace;
 
 /// <summary>Applies the effects of a transition to a marking. Holds buffers: belongs to one thread.</summary>
-internal sealed class EffectRunner(BoundModel model, StateLayout layout, double[] givens, SuccessorList successors)
+internal sealed class EffectRunner(BoundModel model, StateLayout layout, double[] givens, SuccessorList successors, CancellationToken cancellation)
 {
     private const double WholeSlack = 1e-9;
     private const double SumSlack = 1e-9;
+    private const int MostCells = 1 << 25;
 
     private readonly int[] after = new int[model.Variables.Count];
     private readonly int[] left = new int[model.Variables.Count];
@@ -132,7 +133,7 @@ internal sealed class EffectRunner(BoundModel model, StateLayout layout, double[
     {
         if (line == plan.Moves.Length)
         {
-            successors.Add(after, rate, transition);
+            AddDrawn(plan, transition, rate);
             return;
         }
 
@@ -173,13 +174,14 @@ internal sealed class EffectRunner(BoundModel model, StateLayout layout, double[
                 return;
             }
 
+            cancellation.ThrowIfCancellationRequested();
+            var shares = BinomialLaw.Chances(remaining, chances[target] / rest[target], rest[target + 1] / rest[target]);
             for (var taken = 0; taken <= remaining; taken++)
             {
-                var chance = BinomialLaw.Chance(remaining, taken, chances[target] / rest[target], rest[target + 1] / rest[target]);
-                if (chance > 0)
+                if (weight * shares[taken] > 0)
                 {
                     after[move.Targets[target].To] += taken;
-                    Share(target + 1, remaining - taken, weight * chance);
+                    Share(target + 1, remaining - taken, weight * shares[taken]);
                     after[move.Targets[target].To] -= taken;
                 }
             }
@@ -194,6 +196,19 @@ internal sealed class EffectRunner(BoundModel model, StateLayout layout, double[
                 after[move.Targets[target].To] -= taken;
             }
         }
+    }
+
+    private void AddDrawn(EffectPlan plan, int transition, double rate)
+    {
+        var most = MostCells / after.Length;
+        if (successors.Count >= most)
+        {
+            throw new LimitExceededException("states", string.Create(
+                CultureInfo.InvariantCulture,
+                $"{plan.Transition.Label} draws more than {most:N0} outcomes in one state; let fewer replicas go at once, or to fewer targets"));
+        }
+
+        successors.Add(after, rate, transition);
     }
 
     private double[] ChancesOf(EffectPlan plan, MovePlan move)

@@ -17,7 +17,7 @@ internal sealed class SuccessorFinder
     private readonly double[] rates;
     private readonly EffectRunner runner;
 
-    public SuccessorFinder(BoundModel model, GivenValues givens, StateLayout layout, IExprProgram rateProgram)
+    public SuccessorFinder(BoundModel model, GivenValues givens, StateLayout layout, IExprProgram rateProgram, CancellationToken cancellation)
     {
         this.model = model;
         this.givens = givens.AsSpan().ToArray();
@@ -25,7 +25,7 @@ internal sealed class SuccessorFinder
         plans = [.. model.Transitions.Select(t => new EffectPlan(t))];
         rates = new double[model.Transitions.Count];
         Successors = new SuccessorList(model.Variables.Count);
-        runner = new EffectRunner(model, layout, this.givens, Successors);
+        runner = new EffectRunner(model, layout, this.givens, Successors, cancellation);
     }
 
     public SuccessorList Successors { get; }
@@ -39,6 +39,7 @@ internal sealed class SuccessorFinder
 
     /// <summary>Fills <see cref="Successors"/>; those that lead back to the same state are among them.</summary>
     /// <exception cref="StateFaultException">Something that is enabled in the state is not possible.</exception>
+    /// <exception cref="LimitExceededException">More is drawn in the state than fits into memory.</exception>
     public void Find(ReadOnlySpan<int> marking)
     {
         Successors.Clear();

@@ -20,14 +20,23 @@ public class BinomialLawTests
     [InlineData(3, 2, 1, 0, 0)]
     [InlineData(0, 0, 0.5, 0.5, 1)]
     [InlineData(4, 1, 0.25, 0.75, 0.421875)]
-    public void Chance_SureOrFew_IsExact(int count, int taken, double goes, double stays, double expected) =>
+    public void Chance_SureOrFew_IsExact(int count, int taken, double goes, double stays, double expected)
+    {
         Assert.Equal(expected, BinomialLaw.Chance(count, taken, goes, stays));
+        Assert.Equal(expected, BinomialLaw.Chances(count, goes, stays)[taken]);
+    }
 
     [Property(MaxTest = 50)]
     public void Chance_AllNumbers_AddToOne(int seed)
     {
         var random = new Random(seed);
-        var (count, goes) = (random.Next(0, 2000), Math.Pow(random.NextDouble(), 8));
-        Assert.Equal(1, Enumerable.Range(0, count + 1).Sum(k => BinomialLaw.Chance(count, k, goes, 1 - goes)), 1e-12);
+        var (count, goes) = (random.Next(0, 1000), Math.Pow(random.NextDouble(), 8));
+        var chances = BinomialLaw.Chances(count, goes, 1 - goes);
+        Assert.Equal(1, chances.Sum(), 1e-12);
+        for (var k = 0; k <= count; k++)
+        {
+            var alone = BinomialLaw.Chance(count, k, goes, 1 - goes);
+            Assert.Equal(alone, chances[k], (1e-15 * (count + 10) * alone) + 1e-300);
+        }
     }
 }
