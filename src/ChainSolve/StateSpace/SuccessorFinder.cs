@@ -55,9 +55,7 @@ internal sealed class SuccessorFinder
 
             if (!(rate > 0) || double.IsInfinity(rate))
             {
-                throw new StateFaultException(StateCodes.Rate, model.Transitions[t], string.Create(
-                    CultureInfo.InvariantCulture,
-                    $"the rate of {model.Transitions[t].Label} {(double.IsNaN(rate) ? "has no value, or its condition has none: look for a division by zero" : $"is {rate}")}; a rate is finite and not negative"));
+                throw RateFaults.Of(model, t, rate, marking, givens);
             }
 
             sum += rate;

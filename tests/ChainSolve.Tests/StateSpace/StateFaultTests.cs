@@ -11,9 +11,13 @@ public class StateFaultTests
     [InlineData("item pump x 2 { up -> down at pump.up - 1.5 }",
         "1:17 S202 the rate of move up -> down of pump is -0.5; a rate is finite and not negative (in the state 'pump: up 1, down 1', reached by: move up -> down of pump)")]
     [InlineData("item pump { up -> down at 1 }\nitem fan { on -> off at 1 when sqrt(1 - 2 * pump.down) > 0 }",
-        "2:12 S202 the rate of move on -> off of fan has no value, or its condition has none: look for a division by zero; a rate is finite and not negative (in the state 'pump: down; fan: on', reached by: move up -> down of pump)")]
+        "2:12 S202 the condition of move on -> off of fan has no value; look for a division by zero in it (in the state 'pump: down; fan: on', reached by: move up -> down of pump)")]
     [InlineData("crew c = 1\nitem pump { start down\ndown -> up at 1 by c }\nitem fan { start off\noff -> on at 1/(1 - pump.up) by c }",
-        "5:1 S202 the rate of move off -> on of fan has no value, or its condition has none: look for a division by zero; a rate is finite and not negative (in the state 'pump: up; fan: off', reached by: move down -> up of pump)")]
+        "5:1 S202 the rate of move off -> on of fan has no value; look for a division by zero (in the state 'pump: up; fan: off', reached by: move down -> up of pump)")]
+    [InlineData("crew c = 1\nitem pump { start down\ndown -> up at 1 by c }\nitem fan { start off\noff -> on at 1 when 1/fan.on > 0 by c }",
+        "5:1 S202 the condition of move off -> on of fan has no value; look for a division by zero in it (in the state 'pump: down; fan: off', where the model starts)")]
+    [InlineData("crew c = 1\nitem pump { start down\ndown -> up at 1 by c }\nitem fan { start off\noff -> on at 1/fan.on by c }",
+        "5:1 S202 the rate of move off -> on of fan has no value; look for a division by zero (in the state 'pump: down; fan: off', where the model starts)")]
     [InlineData("counter age 0 .. 3\nitem valve { open -> shut 1 - age, stuck age at 1 }\nevent year at 1 when age < 3 { age = age + 2 }",
         "2:14 S203 move open -> shut, stuck of valve would go to valve.shut with the probability -1; a probability is not negative (in the state 'valve: open; age = 2', reached by: event year)")]
     [InlineData("counter age 0 .. 1\nitem valve { open -> shut 0.5, stuck 0.5/(1 - age) at 1 }\nevent year at 1 when age < 1 { age = age + 1 }",
