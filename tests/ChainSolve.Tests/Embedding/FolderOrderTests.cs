@@ -1,6 +1,6 @@
 using System.Reflection;
 
-namespace ChainSolve.Tests.Library;
+namespace ChainSolve.Tests.Embedding;
 
 /// <summary>Data goes one way through the folders of the library: none knows of one that comes after it.</summary>
 public class FolderOrderTests

@@ -5,7 +5,7 @@ using ChainSolve.Numerics.Estimates;
 using ChainSolve.Numerics.Iteration;
 using ChainSolve.Tests.Measures;
 
-namespace ChainSolve.Tests.Library;
+namespace ChainSolve.Tests.Embedding;
 
 /// <summary>What a program that embeds the library can ask of a model.</summary>
 public class ModelSolvingTests

@@ -2,7 +2,7 @@ using ChainSolve.Generators;
 using ChainSolve.Modelling;
 using ChainSolve.Tests.Measures;
 
-namespace ChainSolve.Tests.Library;
+namespace ChainSolve.Tests.Embedding;
 
 /// <summary>A model around a chain that is written down by hand; counts how often the chain is asked for.</summary>
 internal sealed class HandModel
