@@ -1,6 +1,5 @@
 using ChainSolve.Binding;
 using ChainSolve.Generators;
-using ChainSolve.Language.Diagnostics;
 using ChainSolve.Language.Parsing;
 using ChainSolve.Language.Text;
 using ChainSolve.Modelling;
@@ -77,10 +76,9 @@ public sealed partial class Model
     private static ModelReading Read(SourceText source)
     {
         var parsed = ModelParser.Parse(source);
-        var hasTextFaults = parsed.Diagnostics.Any(d => d.Severity == Severity.Fault);
         var bound = Binder.Bind(parsed.Model);
         var diagnostics = parsed.Diagnostics.Concat(bound.Diagnostics).OrderBy(d => d.Span.Start).ToList();
-        if (hasTextFaults || bound.Model is not { } model)
+        if (bound.Model is not { } model)
         {
             return new ModelReading(null, diagnostics);
         }

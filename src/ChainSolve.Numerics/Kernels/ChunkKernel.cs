@@ -13,9 +13,7 @@ internal sealed class ChunkKernel(ChunkedDiagonals diagonals) : IStepKernel
 {
     private const int Lanes = StepVectors.Lanes;
 
-    public double PlainOperations => 1.2;
-
-    public double WideOperations => 3;
+    public StepCost Cost => new(1.2, 3);
 
     public StepTally Plain(StepVectors vectors, StepScale scale, int first, int last)
     {

@@ -7,11 +7,8 @@ namespace ChainSolve.Numerics.Kernels;
 /// </remarks>
 internal interface IStepKernel
 {
-    /// <summary>What a transition takes in a step in one double, in operations of the kind that runs from registers.</summary>
-    double PlainOperations { get; }
-
-    /// <summary>The same in two doubles.</summary>
-    double WideOperations { get; }
+    /// <summary>What a transition takes.</summary>
+    StepCost Cost { get; }
 
     /// <summary>A step in one double an element.</summary>
     /// <param name="vectors">What is read and written.</param>

@@ -6,10 +6,10 @@ namespace ChainSolve.Numerics.Kernels;
 /// <param name="columns">The rates into each state.</param>
 internal sealed class RowKernel(SparseRows columns) : IStepKernel
 {
-    // Transitions wait for memory.
-    public double PlainOperations => 6;
+    /// <summary>What a transition takes on rows of any chain: it waits for memory.</summary>
+    public static StepCost UsualCost { get; } = new(6, 14);
 
-    public double WideOperations => 14;
+    public StepCost Cost => UsualCost;
 
     public StepTally Plain(StepVectors vectors, StepScale scale, int first, int last)
     {

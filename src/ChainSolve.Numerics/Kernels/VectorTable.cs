@@ -1,4 +1,3 @@
-using System.Runtime.CompilerServices;
 using System.Runtime.InteropServices;
 
 namespace ChainSolve.Numerics.Kernels;
@@ -58,7 +57,6 @@ internal sealed class VectorTable
         return (int)(hash % Slots);
     }
 
-    [MethodImpl(MethodImplOptions.NoInlining)]
     private int Add(ReadOnlySpan<double> vector, int slot)
     {
         if (Count == MostCodes)

@@ -35,11 +35,11 @@ public sealed class UniformizationSolver : ITransientSolver
         }
 
         // Before anything is laid out: as on rows.
-        var kernel = new RowKernel(problem.Generator.Columns);
-        var isWide = IsWide(problem, size, mean, kernel, SolveContext.Default.Tolerance);
+        var cost = RowKernel.UsualCost;
+        var isWide = IsWide(problem, size, mean, cost, SolveContext.Default.Tolerance);
         var rewards = problem.Times.Count * (problem.Rates.Count + problem.Totals.Count) * 10.0;
         var vectors = problem.WantsDistributions ? 10.0 * problem.Generator.StateCount * problem.Times.Count : 0;
-        return (StepCount(mean) * ((Entries(problem, size) * (isWide ? kernel.WideOperations : kernel.PlainOperations)) + rewards)) + ((StepCount(mean) - mean) * vectors);
+        return (StepCount(mean) * ((Entries(problem, size) * (isWide ? cost.Wide : cost.Plain)) + rewards)) + ((StepCount(mean) - mean) * vectors);
     }
 
     /// <inheritdoc/>
@@ -65,19 +65,19 @@ public sealed class UniformizationSolver : ITransientSolver
         }
 
         var kernel = StepKernels.For(problem.Generator.Columns, reached, (long)StepCount(mean), context.Cancellation);
-        return new UniformizationPass(problem, reached, IsWide(problem, size, mean, kernel, context.Tolerance), kernel, context).Run();
+        return new UniformizationPass(problem, reached, IsWide(problem, size, mean, kernel.Cost, context.Tolerance), kernel, context).Run();
     }
 
     /// <summary>Whether vectors of two doubles would be taken: where they take little, and where one would be too rough.</summary>
     internal static bool IsWide(TransientProblem problem) =>
         ProblemSize.Estimate(problem) is var size
-        && IsWide(problem, size, LongestMean(size, problem.Times), new RowKernel(problem.Generator.Columns), SolveContext.Default.Tolerance);
+        && IsWide(problem, size, LongestMean(size, problem.Times), RowKernel.UsualCost, SolveContext.Default.Tolerance);
 
-    private static bool IsWide(TransientProblem problem, ProblemSize size, double mean, IStepKernel kernel, double tolerance)
+    private static bool IsWide(TransientProblem problem, ProblemSize size, double mean, StepCost cost, double tolerance)
     {
         // One double loses a rounding or so an entry and a step.
         var loss = StepCount(mean) * ((size.Transitions / Math.Max(1.0, size.States)) + 5) * Rounding;
-        return StepCount(mean) * Entries(problem, size) * kernel.WideOperations <= AffordableOperations || loss * 4 > tolerance;
+        return StepCount(mean) * Entries(problem, size) * cost.Wide <= AffordableOperations || loss * 4 > tolerance;
     }
 
     private static double Entries(TransientProblem problem, ProblemSize size) => size.Transitions + (3.0 * problem.Generator.StateCount);

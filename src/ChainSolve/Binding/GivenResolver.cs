@@ -144,7 +144,7 @@ internal sealed class GivenResolver(BoundModel model)
         {
             if (unit.Text.Length > 0)
             {
-                echoes.Add($"{given.Name} = {GivenText.WithUnit(GivenText.Number(number), unit.Text)}");
+                echoes.Add($"{given.Name} = {GivenText.WithUnit(number, unit.Text)}");
             }
 
             return unit.ToBase(number);

@@ -130,5 +130,5 @@ internal sealed class TimesResolver
 
     private double Value(NumberExpr expr) => GivenEvaluator.ValueOf(expr, givens);
 
-    private string Show(double time) => GivenText.WithUnit(GivenText.Number(time), timeBase.Unit);
+    private string Show(double time) => GivenText.WithUnit(time, timeBase.Unit);
 }

@@ -44,7 +44,7 @@ internal static class ChainBuilder
         var rows = GeneratorRows.Fill(states, finder, model.Variables.Count, model.Transitions.Count, context)
             ?? throw new InvalidOperationException("A state leads to one that was not explored.");
         var generator = Generator.FromRows(rows.Offsets, rows.Targets, rows.Rates);
-        return new ExploredChain(model, givens, options, states, rows, generator, isRefilled: false);
+        return new ExploredChain(model, givens, options, starts, states, rows, generator, isRefilled: false);
     }
 
     /// <summary>
@@ -70,7 +70,15 @@ internal static class ChainBuilder
         {
             var rows = GeneratorRows.Fill(chain.States, finder, model.Variables.Count, model.Transitions.Count, context);
             return rows is not null && rows.HasPatternOf(chain.Rows)
-                ? new ExploredChain(model, givens, options, chain.States, rows with { Offsets = chain.Rows.Offsets, Targets = chain.Rows.Targets }, chain.Generator.WithRates(rows.Rates), isRefilled: true)
+                ? new ExploredChain(
+                    model,
+                    givens,
+                    options,
+                    StartMarkings.Of(model, givens, options.MaxStates),
+                    chain.States,
+                    rows with { Offsets = chain.Rows.Offsets, Targets = chain.Rows.Targets },
+                    chain.Generator.WithRates(rows.Rates),
+                    isRefilled: true)
                 : null;
         }
         catch (StateFaultException)

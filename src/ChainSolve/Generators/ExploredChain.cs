@@ -16,11 +16,18 @@ internal sealed class ExploredChain : Chain
     private readonly ExploreOptions options;
 
     public ExploredChain(
-        BoundModel model, GivenValues givens, ExploreOptions options, StateTable states, GeneratorRows rows, Generator generator, bool isRefilled)
+        BoundModel model,
+        GivenValues givens,
+        ExploreOptions options,
+        IReadOnlyList<(int[] Marking, double Probability)> starts,
+        StateTable states,
+        GeneratorRows rows,
+        Generator generator,
+        bool isRefilled)
     {
         (Model, Givens, States, Rows, Generator, IsRefilled, this.options) = (model, givens, states, rows, generator, isRefilled, options);
         Start = new double[states.Count];
-        foreach (var (marking, probability) in StartMarkings.Of(model, givens, options.MaxStates))
+        foreach (var (marking, probability) in starts)
         {
             Start[states.Find(marking)] += probability;
         }

@@ -15,20 +15,7 @@ public static class Report
     {
         ArgumentNullException.ThrowIfNull(solution);
         ArgumentNullException.ThrowIfNull(writer);
-        switch (format)
-        {
-            case ReportFormat.Text:
-                SolutionText.Write(solution, writer);
-                break;
-            case ReportFormat.Json:
-                SolutionJson.Write(solution, writer);
-                break;
-            case ReportFormat.Csv:
-                SolutionCsv.Write(solution, writer, command);
-                break;
-            default:
-                throw new ArgumentOutOfRangeException(nameof(format), format, "Unknown form.");
-        }
+        Write(solution, format, writer, SolutionText.Write, SolutionJson.Write, (s, w) => SolutionCsv.Write(s, w, command));
     }
 
     /// <summary>Writes what exploring found, as text or JSON.</summary>
@@ -40,17 +27,8 @@ public static class Report
     {
         ArgumentNullException.ThrowIfNull(exploration);
         ArgumentNullException.ThrowIfNull(writer);
-        switch (format)
-        {
-            case ReportFormat.Text:
-                ExplorationText.Write(exploration, writer);
-                break;
-            case ReportFormat.Json:
-                ExplorationJson.Write(exploration, writer);
-                break;
-            default:
-                throw new ArgumentOutOfRangeException(nameof(format), format, "What exploring found is written as text or JSON.");
-        }
+        Write(exploration, format, writer, ExplorationText.Write, ExplorationJson.Write, (_, _) => throw new ArgumentOutOfRangeException(
+            nameof(format), format, "What exploring found is written as text or JSON."));
     }
 
     /// <summary>Writes a transition matrix.</summary>
@@ -61,14 +39,7 @@ public static class Report
     {
         ArgumentNullException.ThrowIfNull(matrix);
         ArgumentNullException.ThrowIfNull(writer);
-        Action<StateMatrix, TextWriter> write = format switch
-        {
-            ReportFormat.Text => MatrixReport.WriteText,
-            ReportFormat.Json => MatrixReport.WriteJson,
-            ReportFormat.Csv => MatrixReport.WriteCsv,
-            _ => throw new ArgumentOutOfRangeException(nameof(format), format, "Unknown form."),
-        };
-        write(matrix, writer);
+        Write(matrix, format, writer, MatrixReport.WriteText, MatrixReport.WriteJson, MatrixReport.WriteCsv);
     }
 
     /// <summary>Writes the most likely states.</summary>
@@ -79,14 +50,7 @@ public static class Report
     {
         ArgumentNullException.ThrowIfNull(likely);
         ArgumentNullException.ThrowIfNull(writer);
-        Action<LikelyStates, TextWriter> write = format switch
-        {
-            ReportFormat.Text => LikelyReport.WriteText,
-            ReportFormat.Json => LikelyReport.WriteJson,
-            ReportFormat.Csv => LikelyReport.WriteCsv,
-            _ => throw new ArgumentOutOfRangeException(nameof(format), format, "Unknown form."),
-        };
-        write(likely, writer);
+        Write(likely, format, writer, LikelyReport.WriteText, LikelyReport.WriteJson, LikelyReport.WriteCsv);
     }
 
     /// <summary>Writes faults and warnings as a JSON document.</summary>
@@ -99,5 +63,18 @@ public static class Report
         ArgumentNullException.ThrowIfNull(file);
         ArgumentNullException.ThrowIfNull(writer);
         FaultsJson.Write(diagnostics, file, writer);
+    }
+
+    private static void Write<T>(
+        T value, ReportFormat format, TextWriter writer, Action<T, TextWriter> text, Action<T, TextWriter> json, Action<T, TextWriter> csv)
+    {
+        var write = format switch
+        {
+            ReportFormat.Text => text,
+            ReportFormat.Json => json,
+            ReportFormat.Csv => csv,
+            _ => throw new ArgumentOutOfRangeException(nameof(format), format, "Unknown form."),
+        };
+        write(value, writer);
     }
 }

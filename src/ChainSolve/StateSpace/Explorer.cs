@@ -11,7 +11,6 @@ internal sealed class Explorer<TKey>(BoundModel model, StateLayout layout, Succe
 {
     private const int StatesBetweenLooks = 4096;
 
-    private readonly KeyCodec<TKey> codec = new(layout);
     private readonly KeyTable<TKey> table = new();
     private readonly SuccessorKeys<TKey> keys = new(new KeyCodec<TKey>(layout), finder.Plans);
 
@@ -22,7 +21,7 @@ internal sealed class Explorer<TKey>(BoundModel model, StateLayout layout, Succe
     {
         foreach (var (marking, _) in starts)
         {
-            table.Add(codec.Pack(marking));
+            table.Add(keys.Codec.Pack(marking));
         }
 
         var current = new int[model.Variables.Count];
@@ -44,7 +43,7 @@ internal sealed class Explorer<TKey>(BoundModel model, StateLayout layout, Succe
             }
 
             var key = table[state];
-            codec.Unpack(key, current);
+            keys.Codec.Unpack(key, current);
             try
             {
                 finder.Find(current);
@@ -74,7 +73,7 @@ internal sealed class Explorer<TKey>(BoundModel model, StateLayout layout, Succe
 
         ThrowIfAny(first, starts);
         table.Sort();
-        return new KeyedStates<TKey>(codec, table, keys, transitions);
+        return new KeyedStates<TKey>(table, keys, transitions);
     }
 
     private void ThrowIfAny((TKey Key, StateFaultException Fault)? first, IReadOnlyList<(int[] Marking, double Probability)> starts)
@@ -82,8 +81,8 @@ internal sealed class Explorer<TKey>(BoundModel model, StateLayout layout, Succe
         if (first is { } found)
         {
             var marking = new int[model.Variables.Count];
-            codec.Unpack(found.Key, marking);
-            throw StateFaults.Tell(model, found.Fault, marking, new WayTo<TKey>(model, codec, finder).Find(starts, found.Key));
+            keys.Codec.Unpack(found.Key, marking);
+            throw StateFaults.Tell(model, found.Fault, marking, new WayTo<TKey>(model, keys, finder).Find(starts, found.Key));
         }
     }
 }

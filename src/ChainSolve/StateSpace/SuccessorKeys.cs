@@ -8,11 +8,14 @@ internal sealed class SuccessorKeys<TKey>(KeyCodec<TKey> codec, IReadOnlyList<Ef
 {
     private readonly TKey[] shifts = [.. plans.Select(codec.ShiftOf)];
 
+    /// <summary>Packs and unpacks markings.</summary>
+    public KeyCodec<TKey> Codec { get; } = codec;
+
     /// <summary>The key of a successor.</summary>
     /// <param name="from">The key of the state.</param>
     /// <param name="successors">Its successors.</param>
     /// <param name="successor">Which of them.</param>
     public TKey Of(TKey from, SuccessorList successors, int successor) => successors.IsShift(successor)
         ? unchecked(from + shifts[successors.Transition(successor)])
-        : codec.Pack(successors.Marking(successor));
+        : Codec.Pack(successors.Marking(successor));
 }

@@ -4,7 +4,7 @@ using ChainSolve.Modelling;
 namespace ChainSolve.StateSpace;
 
 /// <summary>Finds a shortest way from the start to a state by exploring again, so that exploring itself need not remember ways.</summary>
-internal sealed class WayTo<TKey>(BoundModel model, KeyCodec<TKey> codec, SuccessorFinder finder)
+internal sealed class WayTo<TKey>(BoundModel model, SuccessorKeys<TKey> keys, SuccessorFinder finder)
     where TKey : unmanaged, IBinaryInteger<TKey>
 {
     /// <summary>The labels of the transitions on the way; empty for a state of the start.</summary>
@@ -14,13 +14,12 @@ internal sealed class WayTo<TKey>(BoundModel model, KeyCodec<TKey> codec, Succes
         var from = new List<(int State, int Transition)>();
         foreach (var (marking, _) in starts)
         {
-            if (table.Add(codec.Pack(marking)))
+            if (table.Add(keys.Codec.Pack(marking)))
             {
                 from.Add((-1, -1));
             }
         }
 
-        var keys = new SuccessorKeys<TKey>(codec, finder.Plans);
         var current = new int[model.Variables.Count];
         for (var state = 0; state < table.Count; state++)
         {
@@ -29,7 +28,7 @@ internal sealed class WayTo<TKey>(BoundModel model, KeyCodec<TKey> codec, Succes
                 return WayBack(from, state);
             }
 
-            codec.Unpack(table[state], current);
+            keys.Codec.Unpack(table[state], current);
             try
             {
                 finder.Find(current);
