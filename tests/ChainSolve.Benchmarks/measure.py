@@ -114,7 +114,7 @@ def main():
     with tempfile.TemporaryDirectory() as folder:
         folder = pathlib.Path(folder)
         tool, hello = folder / "tool", folder / "hello"
-        subprocess.run(["dotnet", "publish", ROOT / "src/ChainSolve.Cli", "-c", "Release", "-o", tool, "-v", "q"], check=True, stdout=subprocess.DEVNULL)
+        subprocess.run(["dotnet", "publish", ROOT / "src/ChainSolve.Cli", "-c", "Release", "--use-current-runtime", "-o", tool, "-v", "q"], check=True, stdout=subprocess.DEVNULL)
         subprocess.run(["dotnet", "new", "console", "-n", "hello", "-o", hello], check=True, stdout=subprocess.DEVNULL)
         subprocess.run(["dotnet", "publish", hello, "-c", "Release", "-o", hello / "out", "-v", "q"], check=True, stdout=subprocess.DEVNULL)
         (folder / "lattice.chain").write_text(lattice_text(), encoding="utf-8")
