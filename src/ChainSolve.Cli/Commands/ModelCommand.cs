@@ -19,11 +19,12 @@ internal sealed class ModelCommand(ProcessStreams streams, Func<byte[], Request,
         {
             var content = await ModelFile.ReadAsync(request.File, streams, deadline.Token);
             var display = new ProgressDisplay(streams, !request.IsQuiet);
-            var (session, answer) = await display.RunAsync(
+            IModelSession session = null!;
+            var answer = await display.RunAsync(
                 progress =>
                 {
-                    var opened = open(content, request);
-                    return (opened, command(opened, new Work(progress, deadline.Token)));
+                    session = open(content, request);
+                    return command(session, new Work(progress, deadline.Token));
                 },
                 deadline.Token);
 

@@ -14,9 +14,11 @@ internal static class ModelFile
 
     /// <summary>Reads a model.</summary>
     /// <exception cref="FileProblemException">It could not be read.</exception>
-    public static async Task<byte[]> ReadAsync(string path, ProcessStreams streams, CancellationToken cancellation) =>
-        // A read that waits for a pipe or a terminal cannot be cancelled, but it can be left behind.
-        await Task.Run(() => Read(path, streams), cancellation).WaitAsync(cancellation);
+    public static Task<byte[]> ReadAsync(string path, ProcessStreams streams, CancellationToken cancellation) =>
+        // A file that has a length is there at once; a read that waits for a pipe or a terminal cannot be cancelled, but it can be left behind.
+        path != StandardInput && File.Exists(path) && new FileInfo(path).Length > 0
+            ? Task.FromResult(Read(path, streams))
+            : Task.Run(() => Read(path, streams), cancellation).WaitAsync(cancellation);
 
     private static byte[] Read(string path, ProcessStreams streams)
     {

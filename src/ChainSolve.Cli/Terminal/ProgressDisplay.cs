@@ -10,13 +10,11 @@ internal sealed class ProgressDisplay(ProcessStreams streams, bool isWanted)
     private static readonly TimeSpan Patience = TimeSpan.FromMilliseconds(400);
 
     /// <summary>Does the work on another thread and shows its progress meanwhile.</summary>
-    public async Task<T> RunAsync<T>(Func<IProgress<SolveProgress>?, T> work, CancellationToken cancellation)
-    {
-        if (!isWanted || !streams.ErrorIsTerminal || streams.IsDumb)
-        {
-            return work(null);
-        }
+    public Task<T> RunAsync<T>(Func<IProgress<SolveProgress>?, T> work, CancellationToken cancellation) =>
+        isWanted && streams.ErrorIsTerminal && !streams.IsDumb ? WatchAsync(work, cancellation) : Task.FromResult(work(null));
 
+    private async Task<T> WatchAsync<T>(Func<IProgress<SolveProgress>?, T> work, CancellationToken cancellation)
+    {
         var latest = new Latest();
         var running = Task.Run(() => work(latest), cancellation);
         if (await Task.WhenAny(running, Task.Delay(Patience, CancellationToken.None)) != running)

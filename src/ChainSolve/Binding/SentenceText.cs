@@ -12,8 +12,13 @@ internal sealed class SentenceText(SourceText source, IReadOnlyList<TextSpan> co
     {
         var text = new StringBuilder();
         var at = measure.Name.Span.End;
-        foreach (var comment in comments.SkipWhile(c => c.Start < at).TakeWhile(c => c.Start < measure.Span.End))
+        foreach (var comment in comments)
         {
+            if (comment.Start < at || comment.Start >= measure.Span.End)
+            {
+                continue;
+            }
+
             text.Append(source.Content, at, comment.Start - at);
             at = comment.End;
         }

@@ -9,19 +9,23 @@ internal static class UnitUses
     /// <summary>How many there are, and where the first is; null where there is none.</summary>
     public static (int Count, TextSpan? First) In(ModelSyntax model)
     {
-        var spans = model.Statements
-            .SelectMany(StatementParts.Expressions)
-            .SelectMany(SyntaxParts.All)
-            .Select(Span)
-            .OfType<TextSpan>()
-            .ToHashSet();
-        return (spans.Count, spans.Count == 0 ? null : spans.MinBy(s => s.Start));
+        var units = new HashSet<Identifier>();
+        TextSpan? first = null;
+        foreach (var expression in model.Statements.SelectMany(StatementParts.Expressions).SelectMany(SyntaxParts.All))
+        {
+            if (UnitOf(expression) is { } unit && units.Add(unit) && !(unit.Span.Start >= first?.Start))
+            {
+                first = unit.Span;
+            }
+        }
+
+        return (units.Count, first);
     }
 
-    private static TextSpan? Span(ExpressionSyntax syntax) => syntax switch
+    private static Identifier? UnitOf(ExpressionSyntax syntax) => syntax switch
     {
-        UnitSyntax { Unit: { Text: not "%" } unit } => unit.Span,
-        PerUnitSyntax per => per.Unit.Span,
+        UnitSyntax { Unit: { Text: not "%" } unit } => unit,
+        PerUnitSyntax per => per.Unit,
         _ => null,
     };
 }

@@ -36,7 +36,7 @@ internal sealed class ProductExpr(IReadOnlyList<ProductFactor> factors) : Number
 }
 
 /// <summary>A factor of a product.</summary>
-internal readonly record struct ProductFactor(NumberExpr Value, bool IsDivided);
+internal sealed record ProductFactor(NumberExpr Value, bool IsDivided);
 
 /// <summary>The value with its sign changed.</summary>
 internal sealed class NegateExpr(NumberExpr operand) : NumberExpr

@@ -17,7 +17,7 @@ internal sealed class CurveGroup(IReadOnlyList<CurvePlan> plans) : MeasureGroup
             Generator = context.Course.Segments[0].Generator,
             Start = context.Chain.Start,
             Alive = plans[0].Alive,
-            Times = [.. plans.SelectMany(p => p.Ask.Times).Distinct().Order()],
+            Times = CurvePlan.Times(plans),
             Rates = Vectors(p => p.Form == CurveForm.Rate || (p.Form == CurveForm.Average && p.Ask.Times.Contains(0))),
             Totals = Vectors(p => p.Form != CurveForm.Rate),
         };
@@ -42,14 +42,15 @@ internal sealed class CurveGroup(IReadOnlyList<CurvePlan> plans) : MeasureGroup
 
     private sealed class Reader(TransientProblem problem, TransientResult result)
     {
-        private readonly Dictionary<double, int> times = problem.Times.Index().ToDictionary(t => t.Item, t => t.Index);
+        private readonly double[] times = [.. problem.Times];
         private readonly Dictionary<double[], int> rates = Positions(problem.Rates);
         private readonly Dictionary<double[], int> totals = Positions(problem.Totals);
 
         public RawPoint Read(CurvePlan plan, double time)
         {
             var isRate = plan.Form == CurveForm.Rate || (plan.Form == CurveForm.Average && time == 0);
-            Estimate Part(double[] vector) => isRate ? result.Rates[times[time]][rates[vector]] : result.Totals[times[time]][totals[vector]];
+            var at = Array.BinarySearch(times, time);
+            Estimate Part(double[] vector) => isRate ? result.Rates[at][rates[vector]] : result.Totals[at][totals[vector]];
 
             var gain = Part(plan.Gain) * new Estimate(1, plan.GainRounding, true);
             var loss = plan.Loss is { } taken ? Part(taken) : Estimate.Zero;
@@ -63,9 +64,9 @@ internal sealed class CurveGroup(IReadOnlyList<CurvePlan> plans) : MeasureGroup
         private static Dictionary<double[], int> Positions(IReadOnlyList<double[]> vectors)
         {
             var positions = new Dictionary<double[], int>(ReferenceEqualityComparer.Instance);
-            foreach (var (index, vector) in vectors.Index())
+            for (var i = 0; i < vectors.Count; i++)
             {
-                positions[vector] = index;
+                positions[vectors[i]] = i;
             }
 
             return positions;

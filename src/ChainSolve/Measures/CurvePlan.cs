@@ -23,6 +23,32 @@ internal sealed record CurvePlan
 
     /// <summary>The relative error of the entries of <see cref="Gain"/>.</summary>
     public double GainRounding { get; init; }
+
+    /// <summary>The times of all plans, ascending, each once.</summary>
+    public static double[] Times(IReadOnlyList<CurvePlan> plans)
+    {
+        var times = new double[plans.Sum(p => p.Ask.Times.Count)];
+        var filled = 0;
+        foreach (var plan in plans)
+        {
+            foreach (var time in plan.Ask.Times)
+            {
+                times[filled++] = time;
+            }
+        }
+
+        Array.Sort(times);
+        var kept = 0;
+        foreach (var time in times)
+        {
+            if (kept == 0 || time != times[kept - 1])
+            {
+                times[kept++] = time;
+            }
+        }
+
+        return times[..kept];
+    }
 }
 
 /// <summary>What is read from a transient pass.</summary>

@@ -45,7 +45,7 @@ internal sealed class MeasurePlanner(MeasureContext context)
     /// <summary>One pass, unless it would spend far more on sums that nobody asked for than on the chain.</summary>
     private IEnumerable<CurveGroup> Passes(CurvePlan[] plans)
     {
-        double times = plans.SelectMany(p => p.Ask.Times).Distinct().Count();
+        double times = CurvePlan.Times(plans).Length;
         double asked = plans.Sum(p => p.Ask.Times.Count);
         var sums = times * plans.Length;
         var step = context.Chain.Generator.TransitionCount + context.Chain.Generator.StateCount;
