@@ -1,3 +1,15 @@
 using BenchmarkDotNet.Running;
+using ChainSolve.Benchmarks.Jobs;
 
-BenchmarkSwitcher.FromAssembly(typeof(Program).Assembly).Run(args);
+switch (args)
+{
+    case ["steps", var file, var threads, var near, var far]:
+        StepTimer.Run(file, int.Parse(threads), near, far);
+        break;
+    case ["sweep", var file, var measure, var given, .. var values]:
+        SweepTimer.Run(file, measure, given, values);
+        break;
+    default:
+        BenchmarkSwitcher.FromAssembly(typeof(Program).Assembly).Run(args);
+        break;
+}

@@ -1,0 +1,83 @@
+"""The rows of the table: products, transients, sweeps, memory and start-up."""
+import statistics
+
+import numpy as np
+
+from . import by_hand, models, runs
+from .rows import Row, times
+
+GIGABYTE = 1e9
+
+
+def product(setting):
+    """One step of uniformization against one product by SciPy."""
+    fleet = setting.ten_million
+    near, far = 30 / fleet.fastest, 330 / fleet.fastest
+    file = setting.file("product", fleet.text(near=near, far=far))
+    ours = {threads: setting.timer("steps", file, threads, "near", "far") for threads in (1, 2)}
+    matrix = fleet.matrix().T.tocsr()
+    vector = np.full(fleet.states, 1.0 / fleet.states)
+    theirs = runs.seconds(lambda: matrix @ vector, 3 + setting.count)
+    for (threads, took), goal in zip(ours.items(), (5, 10)):
+        told = took if isinstance(took, str) else took["step"]
+        wide = isinstance(took, dict) and "two doubles" in took["how"]
+        job = f"structured product, {fleet.states:,} states, {matrix.nnz:,} nonzeros, {threads} thread(s): a whole step{' in two doubles' if wide else ''}"
+        yield times(job, goal, told, "`A @ v` in SciPy's compressed rows", theirs)
+
+
+def transient(setting):
+    """A whole command at q t = 1000 against the hand-written solve alone."""
+    fleet = setting.million
+    hours = 1000 / (1.02 * fleet.fastest)
+    file = setting.file("transient", fleet.text(at_time=hours))
+    ours = {threads: setting.tool("solve", file, "--threads", threads) for threads in (2, 1)}
+    matrix = fleet.matrix()
+    theirs = runs.seconds(lambda: by_hand.uniformization(matrix, hours), setting.count)
+    for threads, run in ours.items():
+        yield times(
+            f"transient, {fleet.states:,} states, q t = 1000, {threads} thread(s), whole command", 8,
+            run.failure or run.seconds, "uniformization by hand in SciPy, matrix given", theirs)
+
+
+def memory(setting):
+    """The peak of a transient solve."""
+    fleets = [(setting.ten_million, 1.2)]
+    if setting.huge:
+        fleets.append((models.Fleet(39), 20))
+    for fleet, goal in fleets:
+        file = setting.file("memory", fleet.text(at_time=100 / fleet.fastest))
+        run = setting.tool("solve", file, "--max-states", fleet.states, count=1)
+        peak = run.peak / GIGABYTE
+        yield Row(
+            f"peak memory of a transient solve, {fleet.states:,} states", f"at most {goal} GB",
+            run.failure or f"{run.seconds:.3g} s", measured=f"{peak:.2f} GB", reached=not run.failure and peak <= goal)
+
+
+def sweep(setting):
+    """A further point with the same states, where exploring takes most of the first."""
+    fleet = setting.million
+    file = setting.file("sweep", fleet.text(soon=5 / fleet.fastest))
+    took = setting.timer("sweep", file, "soon", "wear", *(f"{w} per h" for w in (1.1e-3, 1.2e-3, 1.3e-3)))
+    job = f"a further point of a sweep, {fleet.states:,} states, of the time of the first"
+    if isinstance(took, str):
+        yield Row(job, "at most 1/5", took, reached=False)
+        return
+    further = statistics.median(took["further"])
+    yield Row(job, "at most 1/5", f"{further:.3g} s", "the first point", f"{took['first']:.3g} s", f"{further / took['first']:.2f}", further <= took["first"] / 5)
+
+
+def start_up(setting):
+    """The whole process of the smallest model; both by turns, since it is short."""
+    file = setting.file("pair", models.PAIR)
+    ours, theirs = [], []
+    for _ in range(10 if setting.quick else 20):
+        theirs.append(runs.process(setting.hello, setting.limit).seconds)
+        run = setting.tool("solve", file, count=1)
+        if run.failure:
+            yield Row("`solve` of a model of two states, whole process", "at most 2x", run.failure, reached=False)
+            return
+        ours.append(run.seconds)
+    ours, theirs = statistics.median(ours), statistics.median(theirs)
+    yield Row(
+        "`solve` of a model of two states, whole process", "at most 2x", f"{ours:.3g} s", "a program that prints one line", f"{theirs:.3g} s",
+        f"{ours / theirs:.1f}x", ours <= 2 * theirs)
