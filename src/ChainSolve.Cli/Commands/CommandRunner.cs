@@ -1,4 +1,5 @@
 using System.CommandLine;
+using System.CommandLine.Invocation;
 using ChainSolve.Cli.Terminal;
 using ChainSolve.Numerics.Iteration;
 
@@ -26,15 +27,11 @@ internal static class CommandRunner
                 throw new UsageException(message);
             }
 
-            // Signals are ours: the parser's own handling would end the process without an exit code that tells why.
-            var invocation = new InvocationConfiguration
-            {
-                EnableDefaultExceptionHandler = false,
-                ProcessTerminationTimeout = null,
-                Output = streams.Answer,
-                Error = streams.Error,
-            };
-            var code = await parsed.InvokeAsync(invocation, signals.Token);
+            // Signals are ours: the parser's own handling would end the process without an exit code that tells why. What it runs
+            // itself is help and the version.
+            var code = parsed.Action is AsynchronousCommandLineAction command
+                ? await command.InvokeAsync(parsed, signals.Token)
+                : parsed.Invoke(new InvocationConfiguration { EnableDefaultExceptionHandler = false, Output = streams.Answer, Error = streams.Error });
             await streams.Answer.FlushAsync(CancellationToken.None);
             return code;
         }

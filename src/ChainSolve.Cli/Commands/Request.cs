@@ -7,7 +7,7 @@ internal sealed record Request
     public required string File { get; init; }
 
     /// <summary>Names of givens and the texts of their values, in the order given.</summary>
-    public required IReadOnlyList<(string Name, string Value)> Settings { get; init; }
+    public required IReadOnlyList<Setting> Settings { get; init; }
 
     public required double? Tolerance { get; init; }
 

@@ -15,7 +15,7 @@ internal static class ValueReader
         ("absorption", [.. AbsorptionSolvers.All.Select(s => s.Name)]),
     ];
 
-    public static (string Name, string Value) Setting(string text)
+    public static Setting Setting(string text)
     {
         var at = text.IndexOf('=', StringComparison.Ordinal);
         if (at <= 0 || at == text.Length - 1)
@@ -23,7 +23,7 @@ internal static class ValueReader
             throw new UsageException($"'--set {text}' is not NAME=VALUE, for example --set mttr=\"4 h\"");
         }
 
-        return (text[..at].Trim(), text[(at + 1)..].Trim());
+        return new Setting(text[..at].Trim(), text[(at + 1)..].Trim());
     }
 
     public static IReadOnlyDictionary<string, string> Methods(string[] texts)

@@ -29,17 +29,18 @@ internal static class ItemStates
     private static void Collect(ItemSymbol item, BindContext context)
     {
         var lists = item.Syntax.Clauses.OfType<StatesSyntax>().ToList();
-        foreach (var (list, index) in lists.Select((l, i) => (l, i)))
+        foreach (var list in lists)
         {
+            var isFirst = ReferenceEquals(list, lists[0]);
             context.Sink.Enter(list);
-            if (index > 0)
+            if (!isFirst)
             {
                 context.Report(BindingFaults.StatementTwice("states", list.Span, LineOf(lists[0], context)));
             }
 
             foreach (var state in list.States)
             {
-                if (!item.AddState(state.Text) && index == 0)
+                if (!item.AddState(state.Text) && isFirst)
                 {
                     context.Report(BindingFaults.StateTwice(state));
                 }

@@ -127,9 +127,11 @@ internal sealed class ModelBinding
     private List<BoundVariable> Variables()
     {
         var variables = new List<BoundVariable>();
-        foreach (var (item, index) in names.All.OfType<ItemSymbol>().Select((item, index) => (item, index)))
+        var index = 0;
+        foreach (var item in names.All.OfType<ItemSymbol>())
         {
             variables.AddRange(item.States.Select((state, at) => new BoundVariable(index, at, $"{item.Name.Text}.{state}")));
+            index++;
         }
 
         variables.AddRange(names.All.OfType<CounterSymbol>().Select((counter, at) => new BoundVariable(-1, at, counter.Name.Text)));

@@ -42,10 +42,10 @@ internal sealed class MeasurePlan
     }
 
     /// <summary>Solves all groups and judges the values, in the order in which the measures were asked.</summary>
-    public IReadOnlyList<(MeasureResult Result, MeasureAnswer Answer)> Run(MeasureContext context)
+    public IReadOnlyList<JudgedMeasure> Run(MeasureContext context)
     {
         var answers = Groups.SelectMany(g => Solve(g, context)).ToDictionary(a => a.Ask, (IEqualityComparer<MeasureAsk>)ReferenceEqualityComparer.Instance);
-        return [.. asks.Select(a => (Judge(answers[a], context.Options), answers[a]))];
+        return [.. asks.Select(a => new JudgedMeasure(Judge(answers[a], context.Options), answers[a]))];
     }
 
     /// <summary>Where shared work fails, each measure is tried alone.</summary>

@@ -29,7 +29,7 @@ internal static class HandMeasures
     public static MeasureResult Solve(this HandChain chain, MeasureAsk ask, SolveOptions? options = null) => chain.SolveAll(options, ask)[0].Result;
 
     /// <summary>Solves measures together.</summary>
-    public static IReadOnlyList<(MeasureResult Result, MeasureAnswer Answer)> SolveAll(this HandChain chain, SolveOptions? options, params MeasureAsk[] asks)
+    public static IReadOnlyList<JudgedMeasure> SolveAll(this HandChain chain, SolveOptions? options, params MeasureAsk[] asks)
     {
         var context = new MeasureContext(chain, options ?? SolveOptions.Default, CancellationToken.None);
         return MeasurePlan.Of(asks, context).Run(context);
