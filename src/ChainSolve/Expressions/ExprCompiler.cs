@@ -5,8 +5,8 @@ namespace ChainSolve.Expressions;
 /// <summary>Makes expressions ready to be evaluated.</summary>
 internal static class ExprCompiler
 {
-    // The just-in-time compiler takes more than linear time on very long methods.
-    private const int LongestMethod = 50_000;
+    /// <summary>The most instructions of a compiled method: the just-in-time compiler takes more than linear time on very long ones.</summary>
+    public const int LongestMethod = 50_000;
 
     /// <summary>One program for some expressions. Cost: linear in the size of their graph.</summary>
     public static IExprProgram Compile(IReadOnlyList<Expr> outputs, ExprBackEnd backEnd = ExprBackEnd.Fastest)

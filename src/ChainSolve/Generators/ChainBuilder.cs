@@ -29,19 +29,19 @@ internal static class ChainBuilder
                 model.Source)]);
         }
 
-        var finder = new SuccessorFinder(model, givens, layout, SuccessorFinder.RateProgram(model, options.BackEnd), context.Cancellation);
+        var plans = new TransitionPlans(model, layout, options.BackEnd);
         var starts = StartMarkings.Of(model, givens, options.MaxStates);
         var states = layout.Bits <= 64
-            ? new Explorer<ulong>(model, layout, finder).Explore(starts, options.MaxStates, context)
-            : new Explorer<UInt128>(model, layout, finder).Explore(starts, options.MaxStates, context);
-        if (states.MostTransitions > Array.MaxLength)
+            ? Explorer<ulong>.Explore(new SuccessorKeys<ulong>(plans), givens, starts, options.MaxStates, context)
+            : Explorer<UInt128>.Explore(new SuccessorKeys<UInt128>(plans), givens, starts, options.MaxStates, context);
+        if (states.TransitionCount > Array.MaxLength)
         {
             throw new LimitExceededException("transitions", string.Create(
                 CultureInfo.InvariantCulture,
-                $"the {states.Count:N0} states of the model have {states.MostTransitions:N0} transitions, and {Array.MaxLength:N0} is the most that is kept; write alike things as one item with 'x N'"));
+                $"the {states.Count:N0} states of the model have {states.TransitionCount:N0} transitions, and {Array.MaxLength:N0} is the most that is kept; write alike things as one item with 'x N'"));
         }
 
-        var rows = GeneratorRows.Fill(states, finder, model.Variables.Count, model.Transitions.Count, context)
+        var rows = new RowFiller(states, givens, null, context).Fill()
             ?? throw new InvalidOperationException("A state leads to one that was not explored.");
         var generator = Generator.FromRows(rows.Offsets, rows.Targets, rows.Rates);
         return new ExploredChain(model, givens, options, starts, states, rows, generator, isRefilled: false);
@@ -65,18 +65,17 @@ internal static class ChainBuilder
             }
         }
 
-        var finder = new SuccessorFinder(model, givens, StateLayout.Of(model, givens), SuccessorFinder.RateProgram(model, options.BackEnd), context.Cancellation);
         try
         {
-            var rows = GeneratorRows.Fill(chain.States, finder, model.Variables.Count, model.Transitions.Count, context);
-            return rows is not null && rows.HasPatternOf(chain.Rows)
+            var rows = new RowFiller(chain.States, givens, chain.Rows, context).Fill();
+            return rows is not null
                 ? new ExploredChain(
                     model,
                     givens,
                     options,
                     StartMarkings.Of(model, givens, options.MaxStates),
                     chain.States,
-                    rows with { Offsets = chain.Rows.Offsets, Targets = chain.Rows.Targets },
+                    rows,
                     chain.Generator.WithRates(rows.Rates),
                     isRefilled: true)
                 : null;

@@ -77,16 +77,15 @@ internal sealed class ExploredChain : Chain
     private void ForEach(Expr expression, Action<int, double> take, CancellationToken cancellation)
     {
         var program = ExprCompiler.Compile([expression], options.BackEnd);
-        var marking = new int[Model.Variables.Count];
-        Span<double> value = stackalloc double[1];
-        for (var state = 0; state < States.Count; state++)
+        for (var first = 0L; first < States.Count; first += StatesBetweenLooks)
         {
-            if (state % StatesBetweenLooks == 0)
-            {
-                cancellation.ThrowIfCancellationRequested();
-            }
+            cancellation.ThrowIfCancellationRequested();
+            States.Visit((int)first, (int)Math.Min(StatesBetweenLooks, States.Count - first), Evaluate);
+        }
 
-            States.ReadMarking(state, marking);
+        void Evaluate(int state, ReadOnlySpan<int> marking)
+        {
+            Span<double> value = stackalloc double[1];
             program.Run(marking, Givens.AsSpan(), value);
             if (!double.IsFinite(value[0]))
             {

@@ -6,7 +6,9 @@ namespace ChainSolve.StateSpace;
 /// <summary>The effects of a transition, made ready to be applied. Immutable; safe to share between threads.</summary>
 internal sealed class EffectPlan
 {
-    public EffectPlan(BoundTransition transition)
+    /// <param name="transition">The transition.</param>
+    /// <param name="counters">The ranges of all counters.</param>
+    public EffectPlan(BoundTransition transition, CounterRange[] counters)
     {
         Transition = transition;
         var outputs = new List<Expr>();
@@ -20,7 +22,8 @@ internal sealed class EffectPlan
         Assignments = [.. transition.Effects.OfType<AssignEffect>().Select(a => (a.Variable, Amount.Of(a.Value, outputs)))];
         Program = outputs.Count == 0 ? null : ExprCompiler.Compile(outputs);
         IsPlain = Moves.All(m => m.Targets.Length == 1);
-        Needs = FixedNeeds();
+        Steps = FixedSteps(counters);
+        Needs = Steps is null ? null : NeedsOf(Steps, counters);
     }
 
     public BoundTransition Transition { get; }
@@ -36,19 +39,52 @@ internal sealed class EffectPlan
     public bool IsPlain { get; }
 
     /// <summary>
-    /// How many replicas have to be in which places, where the transition moves fixed numbers of replicas and does nothing else, so that
-    /// it changes the key of every state by the same amount; null for others.
+    /// By how much each counter changes, where the transition moves fixed numbers of replicas, adds fixed numbers to counters and does nothing
+    /// else, so that it changes the key of every state by the same amount; null for others.
     /// </summary>
-    public (int Place, int Count)[]? Needs { get; }
+    public (int Counter, int Step)[]? Steps { get; }
 
-    private (int Place, int Count)[]? FixedNeeds()
+    /// <summary>Where the variables have to be for such a transition to be possible; null for other transitions.</summary>
+    public VariableRange[]? Needs { get; }
+
+    private (int Counter, int Step)[]? FixedSteps(CounterRange[] counters)
     {
-        var isFixed = IsPlain && Assignments.Length == 0
+        var steps = Transition.Effects.OfType<AssignEffect>().Select(e => StepOf(e, counters)).ToList();
+        var isFixed = IsPlain && steps.All(s => s is not null)
             && Moves.All(m => m is { Count: { Output: < 0, Fixed: >= 0 and <= int.MaxValue } count, Effect.IfAny: false } && count.Fixed == Math.Floor(count.Fixed));
-        return isFixed
-            ? [.. Moves.GroupBy(m => m.Effect.From).Select(g => (g.Key, (int)Math.Min(int.MaxValue, g.Sum(m => m.Count!.Value.Fixed))))]
+        return isFixed ? [.. steps.Select(s => s!.Value)] : null;
+    }
+
+    // n = n + 1, n = n - 2, n = 3 + n; no more than the range is wide, so that its ends less the step are whole numbers that can be kept.
+    private static (int Counter, int Step)? StepOf(AssignEffect effect, CounterRange[] counters)
+    {
+        if (effect.Value is not SumExpr { Terms: [var first, var second] } || first.IsSubtracted)
+        {
+            return null;
+        }
+
+        var (counter, step, sign) = first.Value is VariableExpr ? (first.Value, second.Value, second.IsSubtracted ? -1 : 1) : (second.Value, first.Value, 1);
+        return counter is VariableExpr { Index: var index } && index == effect.Variable && !(second.IsSubtracted && counter == second.Value)
+            && step is ConstantExpr { Value: var value } && value == Math.Floor(value)
+            && counters.First(c => c.Variable == index) is var range && Math.Abs(value) <= Math.Min(int.MaxValue, (double)range.High - range.Low)
+            ? (index, sign * (int)value)
             : null;
     }
+
+    private VariableRange[] NeedsOf((int Counter, int Step)[] steps, CounterRange[] counters)
+    {
+        var places = Moves.GroupBy(m => m.Effect.From)
+            .Select(g => new VariableRange(g.Key, Whole(g.Sum(m => m.Count!.Value.Fixed)), int.MaxValue))
+            .Where(r => r.Least > 0);
+        var values = steps.Select(s =>
+        {
+            var range = counters.First(c => c.Variable == s.Counter);
+            return new VariableRange(s.Counter, Whole((double)range.Low - s.Step), Whole((double)range.High - s.Step));
+        });
+        return [.. places, .. values];
+    }
+
+    private static int Whole(double value) => (int)Math.Clamp(value, int.MinValue, int.MaxValue);
 }
 
 /// <summary>A line of replicas that move.</summary>

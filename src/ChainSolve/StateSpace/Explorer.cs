@@ -5,84 +5,118 @@ using ChainSolve.Numerics.Iteration;
 
 namespace ChainSolve.StateSpace;
 
-/// <summary>Finds all states that a model can reach, level by level from its start. Belongs to one thread.</summary>
-internal sealed class Explorer<TKey>(BoundModel model, StateLayout layout, SuccessorFinder finder)
+/// <summary>
+/// Finds all states that a model can reach, level by level from its start. Each thread has a worker, which owns the states of one shard; states
+/// are expanded in rounds: workers find the successors of their states, then each takes those that it owns.
+/// </summary>
+internal sealed class Explorer<TKey>
     where TKey : unmanaged, IBinaryInteger<TKey>
 {
-    private const int StatesBetweenLooks = 4096;
+    private const int StatesOfARound = 4096;
 
-    private readonly KeyTable<TKey> table = new();
-    private readonly SuccessorKeys<TKey> keys = new(new KeyCodec<TKey>(layout), finder.Plans);
+    // Fewer states than this are sooner expanded than threads told of them.
+    private const int FewStates = 512;
+
+    private readonly SuccessorKeys<TKey> keys;
+    private readonly GivenValues givens;
+    private readonly SolveContext context;
+    private readonly KeySet<TKey> states;
+    private readonly ExploreWorker<TKey>[] workers;
+    private readonly long maxStates;
+    private readonly ExploreReport report;
+
+    private Explorer(SuccessorKeys<TKey> keys, GivenValues givens, long maxStates, int threads, SolveContext context)
+    {
+        (this.keys, this.givens, this.context) = (keys, givens, context);
+        this.maxStates = Math.Min(maxStates, Array.MaxLength);
+        states = KeySets.For<TKey>(keys.Plans.Layout, threads);
+        workers = [.. Enumerable.Range(0, threads).Select(i => new ExploreWorker<TKey>(keys, givens, states, i, context.Cancellation))];
+        report = new ExploreReport(context.Progress);
+    }
 
     /// <summary>The reachable states, numbered by their keys.</summary>
+    /// <param name="keys">What the transitions do.</param>
+    /// <param name="givens">The values of the givens.</param>
+    /// <param name="starts">Where the model starts.</param>
+    /// <param name="maxStates">The most states.</param>
+    /// <param name="context">Threads, cancellation and progress.</param>
+    /// <remarks>The result, the faults and the limits do not depend on the number of threads.</remarks>
     /// <exception cref="LimitExceededException">There are more than the limit.</exception>
     /// <exception cref="ModelFaultsException">A state shows a fault: of those nearest to the start, the one with the smallest key is told.</exception>
-    public StateTable Explore(IReadOnlyList<(int[] Marking, double Probability)> starts, long maxStates, SolveContext context)
+    public static StateTable Explore(
+        SuccessorKeys<TKey> keys, GivenValues givens, IReadOnlyList<(int[] Marking, double Probability)> starts, long maxStates, SolveContext context)
+    {
+        if (context.Threads > 1)
+        {
+            try
+            {
+                return new Explorer<TKey>(keys, givens, maxStates, context.Threads, context).Explore(starts);
+            }
+            catch (LimitExceededException)
+            {
+                // What was done by then depends on the threads: one thread does it again to tell the same as ever.
+            }
+        }
+
+        return new Explorer<TKey>(keys, givens, maxStates, 1, context).Explore(starts);
+    }
+
+    private KeyedStates<TKey> Explore(IReadOnlyList<(int[] Marking, double Probability)> starts)
     {
         foreach (var (marking, _) in starts)
         {
-            table.Add(keys.Codec.Pack(marking));
+            var key = keys.Codec.Pack(marking);
+            workers[states.ShardOf(key)].Start(key);
         }
 
-        var current = new int[model.Variables.Count];
-        var levelEnd = table.Count;
-        var transitions = 0L;
-        (TKey Key, StateFaultException Fault)? first = null;
-        for (var state = 0; state < table.Count; state++)
+        for (var open = NextLevel(); open > 0; open = NextLevel())
         {
-            if (state == levelEnd)
+            while (workers.Any(w => w.Left > 0))
             {
-                ThrowIfAny(first, starts);
-                levelEnd = table.Count;
-            }
-
-            if (state % StatesBetweenLooks == 0)
-            {
+                report.Tell(workers.Sum(w => w.Found), workers.Sum(w => w.LookedAt), Bytes);
                 context.Cancellation.ThrowIfCancellationRequested();
-                context.Progress?.Report(new SolveProgress("exploring", table.Count, 0, ""));
+                Round();
             }
 
-            var key = table[state];
-            keys.Codec.Unpack(key, current);
-            try
-            {
-                finder.Find(current);
-            }
-            catch (StateFaultException fault)
-            {
-                if (first is null || key < first.Value.Key)
-                {
-                    first = (key, fault);
-                }
-
-                continue;
-            }
-
-            for (var s = 0; s < finder.Successors.Count; s++)
-            {
-                var next = keys.Of(key, finder.Successors, s);
-                transitions += next == key ? 0 : 1;
-                if (table.Add(next) && table.Count > maxStates)
-                {
-                    throw new LimitExceededException("states", string.Create(
-                        CultureInfo.InvariantCulture,
-                        $"the model has more than the {maxStates:N0} states allowed, {table.Count - state - 1:N0} of them not looked at yet; raise the limit (MaxStates, --max-states) or write alike things as one item with 'x N'"));
-                }
-            }
+            ThrowIfAny(starts);
         }
 
-        ThrowIfAny(first, starts);
-        table.Sort();
-        return new KeyedStates<TKey>(table, keys, transitions);
+        states.Close(context.Cancellation);
+        return new KeyedStates<TKey>(states, keys, checked((int)workers.Sum(w => w.Found)), workers.Sum(w => w.Transitions));
     }
 
-    private void ThrowIfAny((TKey Key, StateFaultException Fault)? first, IReadOnlyList<(int[] Marking, double Probability)> starts)
+    private long Bytes => states.Bytes + workers.Sum(w => w.Bytes);
+
+    private long NextLevel() => workers.Sum(w => (long)w.NextLevel());
+
+    private void Round()
     {
-        if (first is { } found)
+        // A worker that is alone knows all states, and stops at the very one that is too many.
+        var threads = workers.Sum(w => (long)w.Left) < FewStates ? 1 : workers.Length;
+        var room = workers.Length == 1 ? maxStates : long.MaxValue;
+        Workers.ForEach(workers, threads, w => w.Expand(StatesOfARound, room));
+        if (workers.Length > 1)
         {
-            var marking = new int[model.Variables.Count];
+            Workers.ForEach(workers, threads, w => w.Collect(workers));
+        }
+
+        if (workers.Sum(w => w.Found) > maxStates)
+        {
+            throw new LimitExceededException("states", string.Create(
+                CultureInfo.InvariantCulture,
+                $"the model has more than the {maxStates:N0} states allowed, {maxStates + 1 - workers.Sum(w => w.LookedAt):N0} of them not looked at yet; raise the limit (MaxStates, --max-states) or write alike things as one item with 'x N'"));
+        }
+    }
+
+    private void ThrowIfAny(IReadOnlyList<(int[] Marking, double Probability)> starts)
+    {
+        var faults = workers.Select(w => w.Fault).OfType<(TKey Key, StateFaultException Fault)>().OrderBy(f => f.Key).ToList();
+        if (faults is [var found, ..])
+        {
+            var marking = new int[keys.Plans.Model.Variables.Count];
             keys.Codec.Unpack(found.Key, marking);
-            throw StateFaults.Tell(model, found.Fault, marking, new WayTo<TKey>(model, keys, finder).Find(starts, found.Key));
+            var finder = new SuccessorFinder(keys.Plans, givens, context.Cancellation);
+            throw StateFaults.Tell(keys.Plans.Model, found.Fault, marking, new WayTo<TKey>(keys, finder).Find(starts, found.Key));
         }
     }
 }

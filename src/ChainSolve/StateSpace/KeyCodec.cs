@@ -38,7 +38,7 @@ internal sealed class KeyCodec<TKey>
         derived = [.. last];
     }
 
-    /// <summary>What one replica more in a place adds to a key.</summary>
+    /// <summary>What one replica more in a place, or one more of a counter, adds to a key.</summary>
     private TKey UnitOf(int place)
     {
         foreach (var field in fields)
@@ -48,7 +48,7 @@ internal sealed class KeyCodec<TKey>
                 return TKey.CreateTruncating((uint)(place - field.Variable)) << field.Shift;
             }
 
-            if (field.Kind == FieldKind.Count && place == field.Variable)
+            if (field.Kind != FieldKind.Place && place == field.Variable)
             {
                 return TKey.One << field.Shift;
             }
@@ -71,7 +71,7 @@ internal sealed class KeyCodec<TKey>
         return key;
     }
 
-    /// <summary>What a transition that moves fixed numbers of replicas adds to every key, modulo the size of a key; zero for other transitions.</summary>
+    /// <summary>What a transition that always does the same adds to every key, modulo the size of a key; zero for other transitions.</summary>
     public TKey ShiftOf(EffectPlan plan)
     {
         var shift = TKey.Zero;
@@ -79,6 +79,11 @@ internal sealed class KeyCodec<TKey>
         {
             var count = TKey.CreateTruncating((uint)move.Count!.Value.Fixed);
             shift = unchecked(shift + (count * UnitOf(move.Targets[0].To)) - (count * UnitOf(move.Effect.From)));
+        }
+
+        foreach (var (counter, step) in plan.Steps ?? [])
+        {
+            shift = unchecked(shift + (TKey.CreateTruncating(step) * UnitOf(counter)));
         }
 
         return shift;

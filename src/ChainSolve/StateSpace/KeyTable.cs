@@ -11,8 +11,6 @@ internal sealed class KeyTable<TKey>
 
     public int Count { get; private set; }
 
-    public ReadOnlySpan<TKey> Keys => keys.AsSpan(0, Count);
-
     public TKey this[int number] => keys[number];
 
     /// <summary>Adds a key unless it is there; says whether it was added.</summary>
@@ -39,21 +37,6 @@ internal sealed class KeyTable<TKey>
         return true;
     }
 
-    /// <summary>The number of a key, or -1.</summary>
-    public int IndexOf(TKey key) => slots[Find(slots, key)] - 1;
-
-    /// <summary>Numbers the keys by their order from now on.</summary>
-    public void Sort()
-    {
-        Array.Resize(ref keys, Math.Max(1, Count));
-        Array.Sort(keys, 0, Count);
-        Array.Clear(slots);
-        for (var i = 0; i < Count; i++)
-        {
-            slots[Find(slots, keys[i])] = i + 1;
-        }
-    }
-
     private void Grow()
     {
         var grown = new int[Math.Min(slots.LongLength * 2, 1L << 30)];
@@ -68,21 +51,12 @@ internal sealed class KeyTable<TKey>
     private int Find(int[] table, TKey key)
     {
         var mask = table.Length - 1;
-        var slot = (int)(Hash(key) >> 20) & mask;
+        var slot = (int)(KeyHash.Of(key) >> 32) & mask;
         while (table[slot] != 0 && keys[table[slot] - 1] != key)
         {
             slot = (slot + 1) & mask;
         }
 
         return slot;
-    }
-
-    // Multiplication by an odd number near 2^64 over the golden ratio spreads neighbouring keys (Knuth, The Art of Computer Programming 3, 6.4).
-    private static ulong Hash(TKey key)
-    {
-        var low = ulong.CreateTruncating(key);
-        var high = typeof(TKey) == typeof(ulong) ? 0 : ulong.CreateTruncating(key >> 32) >> 32;
-        var mixed = (low ^ (high * 0xff51afd7ed558ccdUL)) * 0x9e3779b97f4a7c15UL;
-        return mixed ^ (mixed >> 29);
     }
 }

@@ -10,32 +10,23 @@ internal sealed class SuccessorFinder
     // Room for what solvers add to the sum of the rates out of a state.
     private const double LargestSum = 1e308;
 
+    private readonly TransitionPlans plans;
     private readonly BoundModel model;
     private readonly double[] givens;
-    private readonly IExprProgram rateProgram;
-    private readonly EffectPlan[] plans;
     private readonly double[] rates;
     private readonly EffectRunner runner;
 
-    public SuccessorFinder(BoundModel model, GivenValues givens, StateLayout layout, IExprProgram rateProgram, CancellationToken cancellation)
+    public SuccessorFinder(TransitionPlans plans, GivenValues givens, CancellationToken cancellation)
     {
-        this.model = model;
+        this.plans = plans;
+        model = plans.Model;
         this.givens = givens.AsSpan().ToArray();
-        this.rateProgram = rateProgram;
-        plans = [.. model.Transitions.Select(t => new EffectPlan(t))];
         rates = new double[model.Transitions.Count];
         Successors = new SuccessorList(model.Variables.Count);
-        runner = new EffectRunner(model, layout, this.givens, Successors, cancellation);
+        runner = new EffectRunner(model, plans.Layout, this.givens, Successors, cancellation);
     }
 
     public SuccessorList Successors { get; }
-
-    /// <summary>The effects of each transition.</summary>
-    public IReadOnlyList<EffectPlan> Plans => plans;
-
-    /// <summary>The rates of all transitions: 0 where the guard does not hold.</summary>
-    public static IExprProgram RateProgram(BoundModel model, ExprBackEnd backEnd) => ExprCompiler.Compile(
-        [.. model.Transitions.Select(t => t.Guard is null ? t.Rate : new ChooseNumberExpr(t.Guard, t.Rate, new ConstantExpr(0)))], backEnd);
 
     /// <summary>Fills <see cref="Successors"/>; those that lead back to the same state are among them.</summary>
     /// <exception cref="StateFaultException">Something that is enabled in the state is not possible.</exception>
@@ -43,7 +34,7 @@ internal sealed class SuccessorFinder
     public void Find(ReadOnlySpan<int> marking)
     {
         Successors.Clear();
-        rateProgram.Run(marking, givens, rates);
+        plans.Rates.Run(marking, givens, rates);
         var sum = 0.0;
         for (var t = 0; t < rates.Length; t++)
         {
@@ -65,22 +56,22 @@ internal sealed class SuccessorFinder
                     CultureInfo.InvariantCulture, $"with the rate of {model.Transitions[t].Label} the rates out of a state add to more than {LargestSum}; choose a shorter unit of time"));
             }
 
-            if (plans[t].Needs is { } needs && Has(marking, needs))
+            if (plans.Effects[t].Needs is { } needs && Has(marking, needs))
             {
                 Successors.AddShift(rate, t);
             }
             else
             {
-                runner.Run(plans[t], t, rate, marking);
+                runner.Run(plans.Effects[t], t, rate, marking);
             }
         }
     }
 
-    private static bool Has(ReadOnlySpan<int> marking, (int Place, int Count)[] needs)
+    private static bool Has(ReadOnlySpan<int> marking, VariableRange[] needs)
     {
-        foreach (var (place, count) in needs)
+        foreach (var need in needs)
         {
-            if (marking[place] < count)
+            if (!need.Holds(marking))
             {
                 return false;
             }

@@ -1,15 +1,55 @@
 using System.Numerics;
+using System.Runtime.CompilerServices;
+using ChainSolve.Expressions;
 
 namespace ChainSolve.StateSpace;
 
-/// <summary>Gives the keys of successors. Immutable; safe to share between threads.</summary>
-internal sealed class SuccessorKeys<TKey>(KeyCodec<TKey> codec, IReadOnlyList<EffectPlan> plans)
+/// <summary>What the transitions of a model do to keys. Immutable; safe to share between threads.</summary>
+internal sealed class SuccessorKeys<TKey>
     where TKey : unmanaged, IBinaryInteger<TKey>
 {
-    private readonly TKey[] shifts = [.. plans.Select(codec.ShiftOf)];
+    private readonly TKey[] shifts;
+    private readonly int[] positions;
+    private readonly Lazy<EnabledProgram?> enabled;
+
+    public SuccessorKeys(TransitionPlans plans)
+    {
+        Plans = plans;
+        Codec = new KeyCodec<TKey>(plans.Layout);
+        shifts = [.. plans.Effects.Select(Codec.ShiftOf)];
+
+        // Those whose successors have to be worked out stand first; the others by their shifts as numbers with a sign, so that their
+        // successors come out in order.
+        Order = [.. Enumerable.Range(0, shifts.Length).OrderBy(t => plans.Effects[t].Needs is not null).ThenBy(t => shifts[t] ^ TKey.RotateRight(TKey.One, 1)).ThenBy(t => t)];
+        positions = new int[Order.Length];
+        for (var i = 0; i < Order.Length; i++)
+        {
+            positions[Order[i]] = i;
+        }
+
+        OrderedShifts = [.. Order.Select(t => shifts[t])];
+        enabled = new(Compile);
+    }
+
+    public TransitionPlans Plans { get; }
 
     /// <summary>Packs and unpacks markings.</summary>
-    public KeyCodec<TKey> Codec { get; } = codec;
+    public KeyCodec<TKey> Codec { get; }
+
+    /// <summary>The transitions in the order in which <see cref="Enabled"/> lists them.</summary>
+    public int[] Order { get; }
+
+    /// <summary>What each transition adds to keys, in that order.</summary>
+    public TKey[] OrderedShifts { get; }
+
+    /// <summary>
+    /// Lists the transitions that are possible in a state, by their positions in <see cref="Order"/>, where none of them needs a closer look; null
+    /// where it is not to be compiled.
+    /// </summary>
+    public EnabledProgram? Enabled => enabled.Value;
+
+    /// <summary>Where a transition stands in <see cref="Order"/>.</summary>
+    public int PositionOf(int transition) => positions[transition];
 
     /// <summary>The key of a successor.</summary>
     /// <param name="from">The key of the state.</param>
@@ -18,4 +58,15 @@ internal sealed class SuccessorKeys<TKey>(KeyCodec<TKey> codec, IReadOnlyList<Ef
     public TKey Of(TKey from, SuccessorList successors, int successor) => successors.IsShift(successor)
         ? unchecked(from + shifts[successors.Transition(successor)])
         : Codec.Pack(successors.Marking(successor));
+
+    private EnabledProgram? Compile()
+    {
+        if (Plans.BackEnd == ExprBackEnd.Interpreted || !RuntimeFeature.IsDynamicCodeCompiled || Plans.Effects.All(e => e.Needs is null))
+        {
+            return null;
+        }
+
+        var rates = InstructionList.Of([.. Order.Select(t => TransitionPlans.RateOf(Plans.Model.Transitions[t]))]);
+        return rates.Instructions.Length <= ExprCompiler.LongestMethod ? EnabledProgram.Of(rates, [.. Order.Select(t => Plans.Effects[t].Needs)]) : null;
+    }
 }

@@ -4,9 +4,11 @@ using ChainSolve.Modelling;
 namespace ChainSolve.StateSpace;
 
 /// <summary>Finds a shortest way from the start to a state by exploring again, so that exploring itself need not remember ways.</summary>
-internal sealed class WayTo<TKey>(BoundModel model, SuccessorKeys<TKey> keys, SuccessorFinder finder)
+internal sealed class WayTo<TKey>(SuccessorKeys<TKey> keys, SuccessorFinder finder)
     where TKey : unmanaged, IBinaryInteger<TKey>
 {
+    private readonly BoundModel model = keys.Plans.Model;
+
     /// <summary>The labels of the transitions on the way; empty for a state of the start.</summary>
     public IReadOnlyList<string> Find(IReadOnlyList<(int[] Marking, double Probability)> starts, TKey target)
     {

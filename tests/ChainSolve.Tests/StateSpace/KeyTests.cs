@@ -57,20 +57,6 @@ public class KeyTests
             Assert.Single(Assert.Throws<ModelFaultsException>(() => ExploredText.Explore(text)).Faults).Message);
     }
 
-    [Property(MaxTest = 100)]
-    public void KeyTable_ManyKeys_HoldsEachOnceAndSorts(int seed)
-    {
-        var random = new Random(seed);
-        var keys = Enumerable.Range(0, 500).Select(_ => (ulong)random.NextInt64(0, 300) << random.Next(60)).ToArray();
-        var table = new KeyTable<ulong>();
-        var seen = new HashSet<ulong>();
-        Assert.All(keys, k => Assert.Equal(seen.Add(k), table.Add(k)));
-        table.Sort();
-        Assert.Equal(seen.Order(), table.Keys.ToArray());
-        Assert.All(seen, k => Assert.Equal(k, table[table.IndexOf(k)]));
-        Assert.Equal(-1, table.IndexOf(ulong.MaxValue));
-    }
-
     private static void ComesBack<TKey>(KeyCodec<TKey> codec, int[] marking)
         where TKey : unmanaged, IBinaryInteger<TKey>
     {

@@ -1,0 +1,185 @@
+using System.Numerics;
+
+namespace ChainSolve.StateSpace;
+
+/// <summary>
+/// Keys of any width in blocks of 64 neighbours: a hash from the upper bits to a word with a bit for each key. Costs 36 to 72 bytes a block, so
+/// the fewer for each key, the denser they stand.
+/// </summary>
+internal sealed class KeyBlocks<TKey> : KeySet<TKey>
+    where TKey : unmanaged, IBinaryInteger<TKey>
+{
+    private const int BlocksBetweenLooks = 1 << 18;
+
+    // A wide key is aligned to its size, so that its block takes twice that too.
+    private static readonly long KeyBytes = typeof(TKey) == typeof(ulong) ? 8 : 16;
+
+    private readonly Shard[] shards;
+    private TKey[] order = [];
+    private int[] before = [];
+
+    /// <param name="shards">The number of shards.</param>
+    public KeyBlocks(int shards)
+        : base(shards) => this.shards = [.. Enumerable.Range(0, shards).Select(_ => new Shard())];
+
+    public override long Bytes => shards.Sum(s => s.Bytes) + (order.LongLength * (KeyBytes + 4L));
+
+    public override int Add(int shard, ReadOnlySpan<TKey> keys, Span<TKey> added) => shards[shard].Add(keys, added);
+
+    public override void Close(CancellationToken cancellation)
+    {
+        order = new TKey[shards.Sum(s => s.Count)];
+        var count = 0;
+        foreach (var shard in shards)
+        {
+            count += shard.CopyBlocks(order.AsSpan(count), cancellation);
+            shard.Close();
+        }
+
+        KeySort.Sort(order, cancellation);
+        before = new int[order.Length];
+        var keys = 0;
+        for (var b = 0; b < order.Length; b++)
+        {
+            if (b % BlocksBetweenLooks == 0)
+            {
+                cancellation.ThrowIfCancellationRequested();
+            }
+
+            before[b] = keys;
+            keys += BitOperations.PopCount(ShardWith(order[b]).Number(order[b], keys));
+        }
+    }
+
+    public override void Find(ReadOnlySpan<TKey> keys, Span<int> numbers)
+    {
+        for (var i = 0; i < keys.Length; i++)
+        {
+            numbers[i] = ShardWith(keys[i] >> 6).Find(keys[i]);
+        }
+    }
+
+    public override void CopyKeys(int first, Span<TKey> keys)
+    {
+        var at = KeyRuns.LastAtMost(before, first);
+        for (var (b, count, skip) = (at, 0, first - before[at]); count < keys.Length; b++)
+        {
+            KeyRuns.Copy(order[b] << 6, ShardWith(order[b]).WordOf(order[b]), ref skip, keys, ref count);
+        }
+    }
+
+    private Shard ShardWith(TKey block) => shards.Length == 1 ? shards[0] : shards[ShardOf(block << 6)];
+
+    private struct Block
+    {
+        public TKey Number;
+
+        // One bit at least in a block that is there.
+        public ulong Word;
+    }
+
+    /// <summary>Blocks with open addressing and linear probing.</summary>
+    private sealed class Shard
+    {
+        private Block[] blocks = new Block[64];
+        private int[] before = [];
+        private int shift = 64 - 6;
+
+        public int Count { get; private set; }
+
+        public long Bytes => (blocks.LongLength * 2 * KeyBytes) + (4L * before.LongLength);
+
+        public int Add(ReadOnlySpan<TKey> keys, Span<TKey> added)
+        {
+            // Room for all of them, so that slots do not move meanwhile.
+            while ((Count + (long)keys.Length) * 5 > blocks.LongLength * 3)
+            {
+                Grow();
+            }
+
+            var count = 0;
+            foreach (var key in keys)
+            {
+                ref var block = ref blocks[SlotOf(blocks, key >> 6)];
+                if (block.Word == 0)
+                {
+                    block.Number = key >> 6;
+                    Count++;
+                }
+
+                var bit = (int)(uint.CreateTruncating(key) & 63);
+                added[count] = key;
+                count += 1 - (int)((block.Word >> bit) & 1);
+                block.Word |= 1UL << bit;
+            }
+
+            return count;
+        }
+
+        public int CopyBlocks(Span<TKey> numbers, CancellationToken cancellation)
+        {
+            var count = 0;
+            for (var slot = 0; slot < blocks.Length; slot++)
+            {
+                if (slot % BlocksBetweenLooks == 0)
+                {
+                    cancellation.ThrowIfCancellationRequested();
+                }
+
+                if (blocks[slot].Word != 0)
+                {
+                    numbers[count++] = blocks[slot].Number;
+                }
+            }
+
+            return count;
+        }
+
+        /// <summary>Makes room for the numbers of keys.</summary>
+        public void Close() => before = GC.AllocateUninitializedArray<int>(blocks.Length);
+
+        /// <summary>Tells a block how many keys stand before it; gives its word.</summary>
+        public ulong Number(TKey block, int keysBefore)
+        {
+            var slot = SlotOf(blocks, block);
+            before[slot] = keysBefore;
+            return blocks[slot].Word;
+        }
+
+        public ulong WordOf(TKey block) => blocks[SlotOf(blocks, block)].Word;
+
+        public int Find(TKey key)
+        {
+            var slot = SlotOf(blocks, key >> 6);
+            var word = blocks[slot].Word;
+            var bit = 1UL << (int)(uint.CreateTruncating(key) & 63);
+            return (word & bit) == 0 ? -1 : before[slot] + BitOperations.PopCount(word & (bit - 1));
+        }
+
+        private void Grow()
+        {
+            shift--;
+            var grown = new Block[2L * blocks.LongLength];
+            foreach (var block in blocks)
+            {
+                if (block.Word != 0)
+                {
+                    grown[SlotOf(grown, block.Number)] = block;
+                }
+            }
+
+            blocks = grown;
+        }
+
+        private int SlotOf(Block[] table, TKey block)
+        {
+            var slot = (int)(KeyHash.Of(block) >> shift);
+            while (table[slot].Word != 0 && table[slot].Number != block)
+            {
+                slot = (slot + 1) & (table.Length - 1);
+            }
+
+            return slot;
+        }
+    }
+}

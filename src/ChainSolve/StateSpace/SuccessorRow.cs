@@ -1,0 +1,171 @@
+using System.Numerics;
+using ChainSolve.Expressions;
+using ChainSolve.Modelling;
+
+namespace ChainSolve.StateSpace;
+
+/// <summary>
+/// The successors of one state by ascending keys, each once, with the rates to it; the state itself is none of them. Reused from state to
+/// state; belongs to one thread.
+/// </summary>
+/// <remarks>Where nothing needs a closer look, a compiled method does it; the finder does the other states, and gives the same digits.</remarks>
+internal sealed class SuccessorRow<TKey>
+    where TKey : unmanaged, IBinaryInteger<TKey>
+{
+    // Compiling takes tens of milliseconds where it is the first time in a process, and then one or so.
+    private const int StatesUntilCompiled = 5_000;
+
+    // Some room for what solvers add, and for the order of adding.
+    private const double LargestSum = 1e300;
+    private const int FewSuccessors = 32;
+
+    private readonly SuccessorKeys<TKey> keys;
+    private readonly SuccessorFinder finder;
+    private readonly double[] givens;
+    private readonly int[] marking;
+    private readonly int[] enabled;
+    private readonly bool[] happens;
+    private TKey[] rowKeys;
+    private double[] rowRates;
+    private Arrival[] arrivals = [];
+    private EnabledProgram? program;
+    private int untilCompiled;
+
+    public SuccessorRow(SuccessorKeys<TKey> keys, GivenValues givens, CancellationToken cancellation)
+    {
+        this.keys = keys;
+        this.givens = givens.AsSpan().ToArray();
+        var model = keys.Plans.Model;
+        finder = new SuccessorFinder(keys.Plans, givens, cancellation);
+        marking = new int[model.Variables.Count];
+        enabled = new int[model.Transitions.Count];
+        happens = new bool[model.Transitions.Count];
+        rowKeys = new TKey[model.Transitions.Count];
+        rowRates = new double[model.Transitions.Count];
+        untilCompiled = keys.Plans.BackEnd == ExprBackEnd.Compiled ? 1 : StatesUntilCompiled;
+    }
+
+    public int Count { get; private set; }
+
+    public ReadOnlySpan<TKey> Keys => rowKeys.AsSpan(0, Count);
+
+    public ReadOnlySpan<double> Rates => rowRates.AsSpan(0, Count);
+
+    /// <summary>Which transitions were possible in some state so far.</summary>
+    public bool[] Happens()
+    {
+        var byTransition = new bool[happens.Length];
+        for (var i = 0; i < happens.Length; i++)
+        {
+            byTransition[keys.Order[i]] = happens[i];
+        }
+
+        return byTransition;
+    }
+
+    /// <summary>Finds the successors of a state.</summary>
+    /// <exception cref="StateFaultException">Something that is enabled in the state is not possible.</exception>
+    /// <exception cref="LimitExceededException">More is drawn in the state than fits into memory.</exception>
+    public void Find(TKey key)
+    {
+        keys.Codec.Unpack(key, marking);
+        if (untilCompiled > 0 && --untilCompiled == 0)
+        {
+            program = keys.Enabled;
+        }
+
+        if (program is null || !TryShifts(key, program))
+        {
+            finder.Find(marking);
+            Sort(key, finder.Successors);
+        }
+    }
+
+    private bool TryShifts(TKey key, EnabledProgram compiled)
+    {
+        var possible = compiled.Run(marking, givens, rowRates, enabled);
+        var (count, sum, isNegative) = (0, 0.0, false);
+        for (var i = 0; i < possible; i++)
+        {
+            var (rate, position) = (rowRates[i], enabled[i]);
+            sum += rate;
+            isNegative |= rate < 0;
+            happens[position] = true;
+            var next = unchecked(key + keys.OrderedShifts[position]);
+            if (count > 0 && rowKeys[count - 1] == next)
+            {
+                rowRates[count - 1] += rate;
+            }
+            else if (next != key)
+            {
+                rowKeys[count] = next;
+                rowRates[count++] = rate;
+            }
+        }
+
+        Count = count;
+        return possible >= 0 && sum < LargestSum && !isNegative;
+    }
+
+    // Those of one key stay in the order of the transitions, so that their rates are always added in that order.
+    private void Sort(TKey key, SuccessorList successors)
+    {
+        if (successors.Count > rowKeys.Length)
+        {
+            (rowKeys, rowRates) = (new TKey[2 * successors.Count], new double[2 * successors.Count]);
+        }
+
+        if (successors.Count > arrivals.Length)
+        {
+            arrivals = new Arrival[2 * successors.Count];
+        }
+
+        for (var s = 0; s < successors.Count; s++)
+        {
+            arrivals[s] = new Arrival(keys.Of(key, successors, s), s);
+            happens[keys.PositionOf(successors.Transition(s))] = true;
+        }
+
+        Sort(arrivals.AsSpan(0, successors.Count));
+        Count = 0;
+        foreach (var (next, s) in arrivals.AsSpan(0, successors.Count))
+        {
+            // A rate may underflow to 0 when it is shared out among drawn targets; the target stays reachable.
+            if (Count > 0 && rowKeys[Count - 1] == next)
+            {
+                rowRates[Count - 1] += successors.Rate(s);
+            }
+            else if (next != key)
+            {
+                rowKeys[Count] = next;
+                rowRates[Count++] = successors.Rate(s);
+            }
+        }
+    }
+
+    private static void Sort(Span<Arrival> arrivals)
+    {
+        if (arrivals.Length > FewSuccessors)
+        {
+            arrivals.Sort();
+            return;
+        }
+
+        for (var i = 1; i < arrivals.Length; i++)
+        {
+            var arrival = arrivals[i];
+            var at = i;
+            for (; at > 0 && arrivals[at - 1].Key > arrival.Key; at--)
+            {
+                arrivals[at] = arrivals[at - 1];
+            }
+
+            arrivals[at] = arrival;
+        }
+    }
+
+    private readonly record struct Arrival(TKey Key, int Successor) : IComparable<Arrival>
+    {
+        public int CompareTo(Arrival other) => Key == other.Key ? Successor.CompareTo(other.Successor) : Key.CompareTo(other.Key);
+    }
+}
