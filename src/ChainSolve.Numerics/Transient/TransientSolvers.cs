@@ -55,10 +55,27 @@ public static class TransientSolvers
                 $"None of the methods {string.Join(", ", solvers.Select(s => s.Name))} can do {problem.Generator.StateCount} states to these times.");
         }
 
-        var enough = costs[0].Solver is UniformizationSolver && !UniformizationSolver.IsWide(problem) ? AffordableSquaring : CheapSquaring;
-        var first = costs[0].Solver is UniformizationSolver ? costs.FindIndex(c => c.Solver is SquaringSolver && c.Cost <= enough) : 0;
-        var ranked = costs.Select((c, i) => (c.Solver, Rank: i == first ? -1 : i)).OrderBy(c => c.Rank).Select(c => c.Solver);
-        return [.. ranked.Select(s => new Choice<ITransientSolver>(s, Reason(s)))];
+        return [.. InOrder(costs, problem).Select(s => new Choice<ITransientSolver>(s, Reason(s)))];
+    }
+
+    /// <summary>
+    /// By cost, but for the two methods of this library: squaring is right to one rounding, and goes first where it is cheap; where it is
+    /// not, uniformization is tried before it, as long as it promises to take less work, since many chains settle long before the last time.
+    /// </summary>
+    private static IEnumerable<ITransientSolver> InOrder(List<(ITransientSolver Solver, double Cost)> costs, TransientProblem problem)
+    {
+        var squaring = costs.Find(c => c.Solver is SquaringSolver);
+        var walk = costs.Find(c => c.Solver is UniformizationSolver);
+        if (squaring.Solver is null || walk.Solver is null)
+        {
+            return costs.Select(c => c.Solver);
+        }
+
+        var isRough = walk.Cost > squaring.Cost || !UniformizationSolver.IsWide(problem);
+        var isFirst = squaring.Cost <= (isRough ? AffordableSquaring : CheapSquaring);
+        ITransientSolver patient = walk.Cost > squaring.Cost ? new UniformizationSolver { MostWork = squaring.Cost } : walk.Solver;
+        var pair = new Queue<ITransientSolver>(isFirst ? [squaring.Solver, walk.Solver] : [patient, squaring.Solver]);
+        return [.. costs.Select(c => c.Solver is SquaringSolver or UniformizationSolver ? pair.Dequeue() : c.Solver)];
     }
 
     private static string Reason(ITransientSolver solver) => solver switch

@@ -13,15 +13,22 @@ internal sealed class UniformizationPass
     private const double Rounding = 1.2e-16;
     private const long ReportSteps = 256;
 
+    // Below it, finding the classes would cost more than could be saved.
+    private const double FewestSteps = 1000;
+
     private readonly TransientProblem problem;
     private readonly bool[] reached;
     private readonly SolveContext context;
     private readonly UniformizedStep step;
     private readonly DoubleDouble mass;
     private readonly bool isKept;
+    private readonly Patience patience;
+    private double horizon;
 
-    public UniformizationPass(TransientProblem problem, bool[] reached, bool isWide, IStepKernel kernel, SolveContext context)
+    public UniformizationPass(
+        TransientProblem problem, bool[] reached, bool isWide, IStepKernel kernel, SolveContext context, Patience? patience = null)
     {
+        this.patience = patience ?? new Patience(double.PositiveInfinity, 1);
         this.problem = problem;
         this.reached = reached;
         this.context = context;
@@ -47,11 +54,10 @@ internal sealed class UniformizationPass
     {
         double[] times = [.. problem.Times.Where(t => t > 0).Distinct().Order()];
         TimeSums[] sums = [.. times.Select(t => new TimeSums(
-            PoissonWindow.Of(step.Rate * t, PoissonWindow.Deep, context.Cancellation),
-            step, RateCount, TotalCount, problem.WantsDistributions ? reached : null))];
-        var last = sums.Max(s => s.Right);
-        var steps = Walk(sums, last);
-        var lost = Lost(steps);
+            step.Rate * t, step, RateCount, TotalCount, problem.WantsDistributions ? reached : null, context.Cancellation))];
+        horizon = sums[^1].Horizon;
+        var (steps, isSettled, cleared) = Walk(sums);
+        var lost = Lost(steps, isSettled) + cleared;
         var answers = new Dictionary<double, TimeAnswer>();
         for (var i = 0; i < times.Length; i++)
         {
@@ -65,15 +71,21 @@ internal sealed class UniformizationPass
         }
 
         var mean = (step.Rate * times[^1]).High;
-        var shown = mean.ToString(mean < 100 ? "g3" : "F0", CultureInfo.InvariantCulture);
+        var shown = mean.ToString(mean is < 100 or >= 1e9 ? "g3" : "F0", CultureInfo.InvariantCulture);
         return TimeAnswer.Gather(
             problem.Times, answers, problem.WantsDistributions,
-            $"uniformization in {(step.IsWide ? "two doubles" : "one double")}, q t = {shown}, {steps} steps");
+            $"uniformization in {(step.IsWide ? "two doubles" : "one double")}, q t = {shown}, {steps} steps{(isSettled ? ", settled" : "")}");
     }
 
     /// <summary>Goes on until no time needs more; the number of steps taken.</summary>
-    private long Walk(TimeSums[] sums, long last)
+    private (long Steps, bool IsSettled, double Cleared) Walk(TimeSums[] sums)
     {
+        if (step.IsWide && sums[^1].Mean.High > FewestSteps)
+        {
+            var settling = new Settling(problem, reached, step, sums, patience, Report, context.Cancellation);
+            return (settling.Run(), settling.IsSettled, settling.Cleared);
+        }
+
         var first = 0;
         for (long k = 0; ; k++)
         {
@@ -92,15 +104,19 @@ internal sealed class UniformizationPass
 
             if (first == sums.Length)
             {
-                return k;
+                return (k, false, 0);
             }
 
-            if (k % ReportSteps == 0)
-            {
-                context.Progress?.Report(new SolveProgress("uniformization", k, last, ""));
-            }
-
+            Report(k);
             step.Advance();
+        }
+    }
+
+    private void Report(long k)
+    {
+        if (k % ReportSteps == 0)
+        {
+            context.Progress?.Report(new SolveProgress("uniformization", k, (long)horizon, ""));
         }
     }
 
@@ -120,28 +136,30 @@ internal sealed class UniformizationPass
         }
 
         relative += 2 * Rounding;
-        Estimate Bounded(double value, double largest, double absolute) =>
-            largest == 0 ? Estimate.Zero : new Estimate(value, Math.BitIncrement((value * relative) + (largest * absolute)), true);
+        Estimate Bounded(double value, double slack, double largest, double absolute) =>
+            largest == 0 ? Estimate.Zero : new Estimate(value, Math.BitIncrement((value * relative) + (slack * (1 + 1e-6)) + (largest * absolute)), true);
         var answer = new TimeAnswer(
-            [.. problem.Rates.Select((_, r) => Bounded(sums.Rate(r) * rateScale, step.Largest(r), left))],
-            [.. problem.Totals.Select((_, r) => Bounded(sums.Total(r) * totalScale, step.Largest(RateCount + r), leftOfTotals))],
+            [.. problem.Rates.Select((_, r) => Bounded(sums.Rate(r) * rateScale, sums.RateSlack(r), step.Largest(r), left))],
+            [.. problem.Totals.Select((_, r) => Bounded(sums.Total(r) * totalScale, sums.TotalSlack(r) * totalScale, step.Largest(RateCount + r), leftOfTotals))],
             sums.Distribution,
             problem.WantsDistributions ? new double[reached.Length] : null);
         for (var i = 0; problem.WantsDistributions && i < reached.Length; i++)
         {
             answer.Distribution![i] *= rateScale;
-            answer.Bounds![i] = reached[i] ? Bounded(answer.Distribution[i], 1, left).Bound : 0;
+            answer.Bounds![i] = reached[i] ? Bounded(answer.Distribution[i], sums.Slack(i), 1, left).Bound : 0;
         }
 
         return answer;
     }
 
     /// <summary>
-    /// The mass that was dropped: elements below <see cref="StepScale.Flushed"/>, and what underflowed above them.
+    /// The mass that was dropped: elements below <see cref="StepScale.Flushed"/>, and what underflowed above them; and the same at all steps that
+    /// a settled walk did not take.
     /// </summary>
-    private double Lost(long steps) =>
+    private double Lost(long steps, bool isSettled) =>
         (step.DroppedCount * StepScale.Flushed)
-        + (steps * (double)reached.Length * (step.MostInto + 2) * Math.ScaleB(1 + step.Inverse, -1070));
+        + (isSettled && step.DroppedCount > 0 ? horizon * reached.Length * StepScale.Flushed : 0)
+        + ((isSettled ? horizon : steps) * reached.Length * (step.MostInto + 2) * Math.ScaleB(1 + step.Inverse, -1070));
 
     private bool Loses()
     {

@@ -20,8 +20,14 @@ public sealed class UniformizationSolver : ITransientSolver
 
     private const double Rounding = 1.2e-16;
 
+    // Beyond so many steps the losses of one double add up, and most chains settle earlier.
+    private const double MostPlainSteps = 20_000;
+
     /// <inheritdoc/>
     public string Name => "uniformization";
+
+    /// <summary>How many operations are worth it before another method is tried.</summary>
+    internal double MostWork { get; init; } = double.PositiveInfinity;
 
     /// <inheritdoc/>
     public double Cost(TransientProblem problem)
@@ -29,7 +35,7 @@ public sealed class UniformizationSolver : ITransientSolver
         ArgumentNullException.ThrowIfNull(problem);
         var size = ProblemSize.Estimate(problem);
         var mean = LongestMean(size, problem.Times);
-        if (!(mean <= PoissonWindow.LargestMean))
+        if (!double.IsFinite(mean))
         {
             return double.PositiveInfinity;
         }
@@ -58,14 +64,11 @@ public sealed class UniformizationSolver : ITransientSolver
         }
 
         var mean = LongestMean(size, problem.Times);
-        if (!(mean <= PoissonWindow.LargestMean))
-        {
-            throw new NotConvergedException(
-                $"Uniformization would take {mean:g3} steps; it is meant for up to {PoissonWindow.LargestMean:g1}. Choose another method.");
-        }
-
-        var kernel = StepKernels.For(problem.Generator.Columns, reached, (long)StepCount(mean), context.Cancellation);
-        return new UniformizationPass(problem, reached, IsWide(problem, size, mean, kernel.Cost, context.Tolerance), kernel, context).Run();
+        var kernel = StepKernels.For(problem.Generator.Columns, reached, (long)Math.Min(StepCount(mean), 1e15), context.Cancellation);
+        var isWide = IsWide(problem, size, mean, kernel.Cost, context.Tolerance);
+        var stepWork = Entries(problem, size) * (isWide ? kernel.Cost.Wide : kernel.Cost.Plain);
+        var work = mean > PoissonWindow.LargestMean ? Math.Min(MostWork, PoissonWindow.LargestMean / 10 * stepWork) : MostWork;
+        return new UniformizationPass(problem, reached, isWide, kernel, context, new Patience(work, stepWork)).Run();
     }
 
     /// <summary>Whether vectors of two doubles would be taken: where they take little, and where one would be too rough.</summary>
@@ -77,7 +80,7 @@ public sealed class UniformizationSolver : ITransientSolver
     {
         // One double loses a rounding or so an entry and a step.
         var loss = StepCount(mean) * ((size.Transitions / Math.Max(1.0, size.States)) + 5) * Rounding;
-        return StepCount(mean) * Entries(problem, size) * cost.Wide <= AffordableOperations || loss * 4 > tolerance;
+        return StepCount(mean) > MostPlainSteps || StepCount(mean) * Entries(problem, size) * cost.Wide <= AffordableOperations || loss * 4 > tolerance;
     }
 
     private static double Entries(TransientProblem problem, ProblemSize size) => size.Transitions + (3.0 * problem.Generator.StateCount);

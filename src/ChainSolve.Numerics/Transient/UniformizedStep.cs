@@ -82,14 +82,7 @@ internal sealed class UniformizedStep
             : null;
         work = Work;
         MostInto = Enumerable.Range(0, count).Max(j => (int)(columns.Offsets[j + 1] - columns.Offsets[j]));
-        for (var c = 0; c < ChunkCount; c++)
-        {
-            Earn(vectors.Read, c);
-            foreach (var p in vectors.Read.Slice(c * ChunkStates, Math.Min(ChunkStates, count - (c * ChunkStates))))
-            {
-                masses[c] += p;
-            }
-        }
+        Refresh();
     }
 
     /// <summary>The rate q.</summary>
@@ -105,6 +98,9 @@ internal sealed class UniformizedStep
 
     /// <summary>The vector, rounded to doubles.</summary>
     public ReadOnlySpan<double> Vector => vectors.Read;
+
+    /// <summary>The vector, and the one before it as the one to be written.</summary>
+    public StepVectors Vectors => vectors;
 
     public bool IsWide { get; }
 
@@ -156,6 +152,20 @@ internal sealed class UniformizedStep
         }
 
         vectors.Swap();
+    }
+
+    /// <summary>Sums anew, after somebody wrote to the vector.</summary>
+    public void Refresh()
+    {
+        for (var c = 0; c < ChunkCount; c++)
+        {
+            Earn(vectors.Read, c);
+            masses[c] = 0;
+            foreach (var p in vectors.Read.Slice(c * ChunkStates, Math.Min(ChunkStates, vectors.Count - (c * ChunkStates))))
+            {
+                masses[c] += p;
+            }
+        }
     }
 
     private (DoubleDouble[] Exits, DoubleDouble Largest) Exits(Generator generator, bool[] among)
