@@ -1,6 +1,7 @@
 """Runs processes and functions under a time limit: their seconds, peak memory and output."""
 import dataclasses
 import multiprocessing
+import os
 import pathlib
 import re
 import statistics
@@ -18,10 +19,10 @@ class Run:
     failure: str = ""
 
 
-def process(words, limit):
+def process(words, limit, environment=None):
     """Runs a process. Its peak of resident memory is read while it runs, since the figure told at its end may be that of its parent."""
     start = time.perf_counter()
-    running = subprocess.Popen([str(w) for w in words], stdout=subprocess.PIPE, stderr=subprocess.PIPE, text=True)
+    running = subprocess.Popen([str(w) for w in words], stdout=subprocess.PIPE, stderr=subprocess.PIPE, text=True, env={**os.environ, **(environment or {})})
     peak = 0
     while True:
         try:

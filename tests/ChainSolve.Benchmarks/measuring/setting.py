@@ -58,7 +58,11 @@ class Setting:
 
     def tool(self, *words, count=None):
         """A command of the tool, whole process, medians."""
-        return runs.median(["dotnet", self.folder / "tool/ChainSolve.Cli.dll", *words, "--quiet"], self.limit, count or self.count)
+        return runs.median([*self.words(*words), "--quiet"], self.limit, count or self.count)
+
+    def words(self, *words):
+        """A command of the tool as words."""
+        return ["dotnet", self.folder / "tool/ChainSolve.Cli.dll", *words]
 
     def timer(self, *words):
         """What the benchmark project times, as it printed it; a text that tells why where there is nothing."""

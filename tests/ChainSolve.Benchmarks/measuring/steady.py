@@ -38,7 +38,7 @@ def _row(setting, basins, goal):
     others = ", ".join(f"{m}: {t if isinstance(t, str) else f'{t:.3g} s'}" for m, t in found.items() if m != best)
     how = f", {measure['method']}" if measure else ""
     job = f"steady, {basins.name}, {matrix.shape[0]:,} states, whole command{how}"
-    beside = f"SciPy, matrix given: best {best} ({others})"
+    beside = f"SciPy, matrix given: {best or 'none'} ({others})"
     if best or run.failure or not any(t.startswith("not done") for t in found.values()):
         return times(job, goal, run.failure or run.seconds, beside, done[best] if best else "none converged")
     return dataclasses.replace(times(job, goal, run.seconds, beside, limit), theirs=f"over {limit:.0f} s", measured=f"over {limit / run.seconds:.0f}x")
