@@ -47,28 +47,41 @@ internal static class ItemGrammar
         from mean in Expression
         select new DelaySyntax { Span = default, Mean = mean });
 
-    private static readonly TokenListParser<TokenKind, ItemClauseSyntax> Move =
+    // In parts, since the types of one long query nest so deep that they cannot be compiled ahead.
+    private static readonly TokenListParser<TokenKind, Route> MoveRoute =
         from source in Name("the name of a state, 'states' or 'start'")
         from arrow in Symbol(TokenKind.Arrow, "'->'")
         from targets in List(StateShare)
+        select new Route(source, targets);
+
+    private static readonly TokenListParser<TokenKind, Pace> MovePace =
         from rate in After("at", Expression)
         from delay in rate is null ? After("after", Delay) : Skip<DelaySyntax>()
         from timed in rate is null && delay is null ? Missing("'at RATE' or 'after mean TIME'") : Present
-        from when in After("when", Expression)
+        select new Pace(rate, delay);
+
+    private static readonly TokenListParser<TokenKind, Service> MoveService =
         from crew in After("by", Name("the name of a crew"))
         from rank in crew is null ? Skip<ExpressionSyntax>() : After("rank", Expression)
+        select new Service(crew, rank);
+
+    private static readonly TokenListParser<TokenKind, ItemClauseSyntax> Move =
+        from route in MoveRoute
+        from pace in MovePace
+        from when in After("when", Expression)
+        from service in MoveService
         from name in After("named", Name("a name for the move"))
         from effects in Effects
         select (ItemClauseSyntax)new MoveSyntax
         {
             Span = default,
-            From = source,
-            Targets = targets,
-            Rate = rate,
-            Delay = delay,
+            From = route.From,
+            Targets = route.Targets,
+            Rate = pace.Rate,
+            Delay = pace.Delay,
             When = when,
-            Crew = crew,
-            Rank = rank,
+            Crew = service.Crew,
+            Rank = service.Rank,
             Name = name,
             Effects = effects ?? [],
         };
@@ -115,4 +128,10 @@ internal static class ItemGrammar
     private static TokenListParser<TokenKind, bool> Missing(string what) => input => TokenListParserResult.Empty<TokenKind, bool>(input, [what]);
 
     private static TokenListParser<TokenKind, bool> Present => input => TokenListParserResult.Value(true, input, input);
+
+    private sealed record Route(Identifier From, IReadOnlyList<StateShareSyntax> Targets);
+
+    private sealed record Pace(ExpressionSyntax? Rate, DelaySyntax? Delay);
+
+    private sealed record Service(Identifier? Crew, ExpressionSyntax? Rank);
 }
