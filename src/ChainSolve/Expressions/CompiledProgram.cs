@@ -24,15 +24,23 @@ internal sealed class CompiledProgram : IExprProgram
             "Evaluate", typeof(void), [typeof(int).MakeByRefType(), typeof(double).MakeByRefType(), typeof(double).MakeByRefType()], typeof(CompiledProgram).Module, skipVisibility: true);
         var il = method.GetILGenerator();
         var carry = il.DeclareLocal(typeof(double));
-        new InstructionEmitter(il, list).Emit(output =>
-        {
-            il.Emit(OpCodes.Stloc, carry);
-            InstructionEmitter.Address(il, OpCodes.Ldarg_2, output * sizeof(double));
-            il.Emit(OpCodes.Ldloc, carry);
-            il.Emit(OpCodes.Stind_R8);
-        });
+        new InstructionEmitter(il, list, PutVariable, TakeOutput).Emit();
         il.Emit(OpCodes.Ret);
         return new CompiledProgram(method.CreateDelegate<Body>(), list.Outputs);
+
+        void PutVariable(int variable)
+        {
+            InstructionEmitter.Address(il, 0, variable * sizeof(int));
+            il.Emit(OpCodes.Ldind_I4);
+        }
+
+        void TakeOutput(int output)
+        {
+            il.Emit(OpCodes.Stloc, carry);
+            InstructionEmitter.Address(il, 2, output * sizeof(double));
+            il.Emit(OpCodes.Ldloc, carry);
+            il.Emit(OpCodes.Stind_R8);
+        }
     }
 
     // The method reads by offset, without bounds checks: lengths are the caller's duty and checked by the callers' layouts.

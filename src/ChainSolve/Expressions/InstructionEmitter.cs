@@ -3,16 +3,20 @@ using System.Reflection.Emit;
 
 namespace ChainSolve.Expressions;
 
-/// <summary>Writes instructions as the code of a method whose first argument is the marking and whose second are the givens.</summary>
-internal sealed class InstructionEmitter(ILGenerator il, InstructionList list)
+/// <summary>Writes instructions as the code of a method whose second argument refers to the givens.</summary>
+/// <param name="il">Takes the code.</param>
+/// <param name="list">The instructions.</param>
+/// <param name="putVariable">Writes the code that puts a variable on the stack, as a whole number.</param>
+/// <param name="takeOutput">Writes the code that takes the value on the stack as the output of a number.</param>
+internal sealed class InstructionEmitter(ILGenerator il, InstructionList list, Action<int> putVariable, Action<int> takeOutput)
 {
     private readonly Dictionary<int, Label> labels = [];
     private readonly LocalBuilder[] slots = [.. Enumerable.Range(0, list.Slots).Select(_ => il.DeclareLocal(typeof(double)))];
 
     /// <summary>Puts the address of a cell behind the one that an argument refers to.</summary>
-    public static void Address(ILGenerator il, OpCode argument, int offset)
+    public static void Address(ILGenerator il, int argument, int offset)
     {
-        il.Emit(argument);
+        il.Emit(OpCodes.Ldarg, (short)argument);
         if (offset > 0)
         {
             il.Emit(OpCodes.Ldc_I4, offset);
@@ -21,8 +25,7 @@ internal sealed class InstructionEmitter(ILGenerator il, InstructionList list)
     }
 
     /// <summary>Writes the code of all outputs.</summary>
-    /// <param name="takeOutput">Writes the code that takes the value on the stack as the output of a number.</param>
-    public void Emit(Action<int> takeOutput)
+    public void Emit()
     {
         for (var at = 0; at < list.Instructions.Length; at++)
         {
@@ -31,7 +34,7 @@ internal sealed class InstructionEmitter(ILGenerator il, InstructionList list)
                 il.MarkLabel(label);
             }
 
-            Emit(list.Instructions[at], takeOutput);
+            Emit(list.Instructions[at]);
         }
 
         if (labels.TryGetValue(list.Instructions.Length, out var end))
@@ -40,7 +43,7 @@ internal sealed class InstructionEmitter(ILGenerator il, InstructionList list)
         }
     }
 
-    private void Emit(Instruction instruction, Action<int> takeOutput)
+    private void Emit(Instruction instruction)
     {
         switch (instruction.Operation)
         {
@@ -48,12 +51,11 @@ internal sealed class InstructionEmitter(ILGenerator il, InstructionList list)
                 il.Emit(OpCodes.Ldc_R8, instruction.Constant);
                 break;
             case Operation.Given:
-                Address(il, OpCodes.Ldarg_1, instruction.Argument * sizeof(double));
+                Address(il, 1, instruction.Argument * sizeof(double));
                 il.Emit(OpCodes.Ldind_R8);
                 break;
             case Operation.Variable:
-                Address(il, OpCodes.Ldarg_0, instruction.Argument * sizeof(int));
-                il.Emit(OpCodes.Ldind_I4);
+                putVariable(instruction.Argument);
                 il.Emit(OpCodes.Conv_R8);
                 break;
             case Operation.Load:

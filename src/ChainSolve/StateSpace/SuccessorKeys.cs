@@ -10,7 +10,7 @@ internal sealed class SuccessorKeys<TKey>
 {
     private readonly TKey[] shifts;
     private readonly int[] positions;
-    private readonly Lazy<EnabledProgram?> enabled;
+    private readonly Lazy<SuccessorProgram<TKey>?> program;
 
     public SuccessorKeys(TransitionPlans plans)
     {
@@ -27,8 +27,7 @@ internal sealed class SuccessorKeys<TKey>
             positions[Order[i]] = i;
         }
 
-        OrderedShifts = [.. Order.Select(t => shifts[t])];
-        enabled = new(Compile);
+        program = new(Compile);
     }
 
     public TransitionPlans Plans { get; }
@@ -36,17 +35,11 @@ internal sealed class SuccessorKeys<TKey>
     /// <summary>Packs and unpacks markings.</summary>
     public KeyCodec<TKey> Codec { get; }
 
-    /// <summary>The transitions in the order in which <see cref="Enabled"/> lists them.</summary>
+    /// <summary>The transitions in the order of <see cref="Program"/>.</summary>
     public int[] Order { get; }
 
-    /// <summary>What each transition adds to keys, in that order.</summary>
-    public TKey[] OrderedShifts { get; }
-
-    /// <summary>
-    /// Lists the transitions that are possible in a state, by their positions in <see cref="Order"/>, where none of them needs a closer look; null
-    /// where it is not to be compiled.
-    /// </summary>
-    public EnabledProgram? Enabled => enabled.Value;
+    /// <summary>One method for the successors of most states; null where none is to be compiled. Compiled on first use.</summary>
+    public SuccessorProgram<TKey>? Program => program.Value;
 
     /// <summary>Where a transition stands in <see cref="Order"/>.</summary>
     public int PositionOf(int transition) => positions[transition];
@@ -59,7 +52,7 @@ internal sealed class SuccessorKeys<TKey>
         ? unchecked(from + shifts[successors.Transition(successor)])
         : Codec.Pack(successors.Marking(successor));
 
-    private EnabledProgram? Compile()
+    private SuccessorProgram<TKey>? Compile()
     {
         if (Plans.BackEnd == ExprBackEnd.Interpreted || !RuntimeFeature.IsDynamicCodeCompiled || Plans.Effects.All(e => e.Needs is null))
         {
@@ -67,6 +60,10 @@ internal sealed class SuccessorKeys<TKey>
         }
 
         var rates = InstructionList.Of([.. Order.Select(t => TransitionPlans.RateOf(Plans.Model.Transitions[t]))]);
-        return rates.Instructions.Length <= ExprCompiler.LongestMethod ? EnabledProgram.Of(rates, [.. Order.Select(t => Plans.Effects[t].Needs)]) : null;
+        return rates.Instructions.Length <= ExprCompiler.LongestMethod
+            ? new SuccessorProgram<TKey>(SuccessorEmitter.Emit(Plans.Layout, rates, [.. Order.Select(StepOf)], typeof(TKey) == typeof(ulong) ? 1 : 2), Order.Length)
+            : null;
     }
+
+    private SuccessorStep StepOf(int transition) => new(UInt128.CreateTruncating(shifts[transition]), Plans.Effects[transition].Needs);
 }

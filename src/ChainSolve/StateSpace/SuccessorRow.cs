@@ -15,20 +15,17 @@ internal sealed class SuccessorRow<TKey>
     // Compiling takes tens of milliseconds where it is the first time in a process, and then one or so.
     private const int StatesUntilCompiled = 5_000;
 
-    // Some room for what solvers add, and for the order of adding.
-    private const double LargestSum = 1e300;
     private const int FewSuccessors = 32;
 
     private readonly SuccessorKeys<TKey> keys;
     private readonly SuccessorFinder finder;
     private readonly double[] givens;
     private readonly int[] marking;
-    private readonly int[] enabled;
     private readonly bool[] happens;
     private TKey[] rowKeys;
     private double[] rowRates;
     private Arrival[] arrivals = [];
-    private EnabledProgram? program;
+    private SuccessorProgram<TKey>? program;
     private int untilCompiled;
 
     public SuccessorRow(SuccessorKeys<TKey> keys, GivenValues givens, CancellationToken cancellation)
@@ -38,7 +35,6 @@ internal sealed class SuccessorRow<TKey>
         var model = keys.Plans.Model;
         finder = new SuccessorFinder(keys.Plans, givens, cancellation);
         marking = new int[model.Variables.Count];
-        enabled = new int[model.Transitions.Count];
         happens = new bool[model.Transitions.Count];
         rowKeys = new TKey[model.Transitions.Count];
         rowRates = new double[model.Transitions.Count];
@@ -68,43 +64,18 @@ internal sealed class SuccessorRow<TKey>
     /// <exception cref="LimitExceededException">More is drawn in the state than fits into memory.</exception>
     public void Find(TKey key)
     {
-        keys.Codec.Unpack(key, marking);
         if (untilCompiled > 0 && --untilCompiled == 0)
         {
-            program = keys.Enabled;
+            program = keys.Program;
         }
 
-        if (program is null || !TryShifts(key, program))
+        Count = program?.Run(key, givens, rowRates, rowKeys, happens) ?? -1;
+        if (Count < 0)
         {
+            keys.Codec.Unpack(key, marking);
             finder.Find(marking);
             Sort(key, finder.Successors);
         }
-    }
-
-    private bool TryShifts(TKey key, EnabledProgram compiled)
-    {
-        var possible = compiled.Run(marking, givens, rowRates, enabled);
-        var (count, sum, isNegative) = (0, 0.0, false);
-        for (var i = 0; i < possible; i++)
-        {
-            var (rate, position) = (rowRates[i], enabled[i]);
-            sum += rate;
-            isNegative |= rate < 0;
-            happens[position] = true;
-            var next = unchecked(key + keys.OrderedShifts[position]);
-            if (count > 0 && rowKeys[count - 1] == next)
-            {
-                rowRates[count - 1] += rate;
-            }
-            else if (next != key)
-            {
-                rowKeys[count] = next;
-                rowRates[count++] = rate;
-            }
-        }
-
-        Count = count;
-        return possible >= 0 && sum < LargestSum && !isNegative;
     }
 
     // Those of one key stay in the order of the transitions, so that their rates are always added in that order.
