@@ -7,6 +7,9 @@ namespace ChainSolve.StateSpace;
 internal sealed class ExploreWorker<TKey>
     where TKey : unmanaged, IBinaryInteger<TKey>
 {
+    // So many are taken at once that their places in memory are waited for together.
+    private const int KeysTakenAtOnce = 1024;
+
     private readonly KeySet<TKey> states;
     private readonly int shard;
     private readonly SuccessorRow<TKey> row;
@@ -74,19 +77,16 @@ internal sealed class ExploreWorker<TKey>
             }
 
             Transitions += row.Count;
-            if (sent.Length == 1)
+            Send(row.Keys);
+            if (sent.Length == 1 && (sent[0].Count >= KeysTakenAtOnce || Found + sent[0].Count > room))
             {
-                Take(row.Keys);
-            }
-            else
-            {
-                Send(row.Keys);
+                Collect([this]);
             }
         }
     }
 
     /// <summary>Takes what all workers sent to it.</summary>
-    public void Collect(ExploreWorker<TKey>[] workers)
+    public void Collect(ReadOnlySpan<ExploreWorker<TKey>> workers)
     {
         foreach (var worker in workers)
         {
@@ -97,9 +97,20 @@ internal sealed class ExploreWorker<TKey>
 
     private void Send(ReadOnlySpan<TKey> keys)
     {
+        if (sent.Length == 1)
+        {
+            sent[0].Add(keys);
+            return;
+        }
+
+        foreach (var list in sent)
+        {
+            list.Room(keys.Length);
+        }
+
         foreach (var key in keys)
         {
-            sent[states.ShardOf(key)].Add(key);
+            sent[states.ShardOf(key)].AddToRoom(key);
         }
     }
 

@@ -12,7 +12,7 @@ namespace ChainSolve.StateSpace;
 internal sealed class Explorer<TKey>
     where TKey : unmanaged, IBinaryInteger<TKey>
 {
-    private const int StatesOfARound = 4096;
+    private const int StatesOfARound = 8192;
 
     // Fewer states than this are sooner expanded than threads told of them.
     private const int FewStates = 512;
@@ -95,11 +95,7 @@ internal sealed class Explorer<TKey>
         var threads = workers.Sum(w => (long)w.Left) < FewStates ? 1 : workers.Length;
         var room = workers.Length == 1 ? maxStates : long.MaxValue;
         Workers.ForEach(workers, threads, w => w.Expand(StatesOfARound, room));
-        if (workers.Length > 1)
-        {
-            Workers.ForEach(workers, threads, w => w.Collect(workers));
-        }
-
+        Workers.ForEach(workers, threads, w => w.Collect(workers));
         if (workers.Sum(w => w.Found) > maxStates)
         {
             throw new LimitExceededException("states", string.Create(

@@ -11,6 +11,9 @@ internal sealed class KeyBlocks<TKey> : KeySet<TKey>
 {
     private const int BlocksBetweenLooks = 1 << 18;
 
+    // The slots of so many keys are touched before any of them is looked at, so that memory is waited for once and not for each.
+    private const int KeysAtOnce = 128;
+
     // A wide key is aligned to its size, so that its block takes twice that too.
     private static readonly long KeyBytes = typeof(TKey) == typeof(ulong) ? 8 : 16;
 
@@ -53,9 +56,18 @@ internal sealed class KeyBlocks<TKey> : KeySet<TKey>
 
     public override void Find(ReadOnlySpan<TKey> keys, Span<int> numbers)
     {
-        for (var i = 0; i < keys.Length; i++)
+        for (var first = 0; first < keys.Length; first += KeysAtOnce)
         {
-            numbers[i] = ShardWith(keys[i] >> 6).Find(keys[i]);
+            var run = keys.Slice(first, Math.Min(KeysAtOnce, keys.Length - first));
+            foreach (var key in run)
+            {
+                ShardWith(key >> 6).Touch(key);
+            }
+
+            for (var i = 0; i < run.Length; i++)
+            {
+                numbers[first + i] = ShardWith(run[i] >> 6).Find(run[i]);
+            }
         }
     }
 
@@ -85,6 +97,9 @@ internal sealed class KeyBlocks<TKey> : KeySet<TKey>
         private int[] before = [];
         private int shift = 64 - 6;
 
+        // Nobody asks for it; without it, touching would be left out.
+        private ulong touched;
+
         public int Count { get; private set; }
 
         public long Bytes => (blocks.LongLength * 2 * KeyBytes) + (4L * before.LongLength);
@@ -98,22 +113,48 @@ internal sealed class KeyBlocks<TKey> : KeySet<TKey>
             }
 
             var count = 0;
-            foreach (var key in keys)
+            for (var first = 0; first < keys.Length; first += KeysAtOnce)
             {
-                ref var block = ref blocks[SlotOf(blocks, key >> 6)];
-                if (block.Word == 0)
+                var run = keys.Slice(first, Math.Min(KeysAtOnce, keys.Length - first));
+                foreach (var key in run)
                 {
-                    block.Number = key >> 6;
-                    Count++;
+                    Touch(key);
                 }
 
-                var bit = (int)(uint.CreateTruncating(key) & 63);
-                added[count] = key;
-                count += 1 - (int)((block.Word >> bit) & 1);
-                block.Word |= 1UL << bit;
+                foreach (var key in run)
+                {
+                    added[count] = key;
+                    count += Add(key);
+                }
             }
 
             return count;
+        }
+
+        /// <summary>Asks memory for where a key is looked for first, without waiting for it.</summary>
+        public void Touch(TKey key)
+        {
+            var slot = (int)(KeyHash.Of(key >> 6) >> shift);
+            touched ^= blocks[slot].Word;
+            if (before.Length > 0)
+            {
+                touched ^= (uint)before[slot];
+            }
+        }
+
+        private int Add(TKey key)
+        {
+            ref var block = ref blocks[SlotOf(blocks, key >> 6)];
+            if (block.Word == 0)
+            {
+                block.Number = key >> 6;
+                Count++;
+            }
+
+            var bit = (int)(uint.CreateTruncating(key) & 63);
+            var isNew = 1 - (int)((block.Word >> bit) & 1);
+            block.Word |= 1UL << bit;
+            return isNew;
         }
 
         public int CopyBlocks(Span<TKey> numbers, CancellationToken cancellation)

@@ -26,11 +26,14 @@ internal sealed class KeyList<TKey>
 
     public void Take(int count) => Count += count;
 
-    public void Add(TKey key)
+    public void Add(ReadOnlySpan<TKey> added)
     {
-        Room(1)[0] = key;
-        Take(1);
+        added.CopyTo(Room(added.Length));
+        Take(added.Length);
     }
+
+    /// <summary>Adds a key where there is room for it already.</summary>
+    public void AddToRoom(TKey key) => keys[Count++] = key;
 
     public void Clear() => Count = 0;
 }

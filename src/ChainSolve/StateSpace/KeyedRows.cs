@@ -6,18 +6,18 @@ namespace ChainSolve.StateSpace;
 internal sealed class KeyedRows<TKey>(KeySet<TKey> states, SuccessorRow<TKey> row) : StateRows
     where TKey : unmanaged, IBinaryInteger<TKey>
 {
+    private readonly KeyList<TKey> successors = new();
     private TKey[] keys = [];
     private int[] counts = [];
     private int[] targets = [];
     private double[] rates = [];
     private int rowCount;
-    private int entryCount;
 
     public override ReadOnlySpan<int> Counts => counts.AsSpan(0, rowCount);
 
-    public override ReadOnlySpan<int> Targets => targets.AsSpan(0, entryCount);
+    public override ReadOnlySpan<int> Targets => targets.AsSpan(0, successors.Count);
 
-    public override ReadOnlySpan<double> Rates => rates.AsSpan(0, entryCount);
+    public override ReadOnlySpan<double> Rates => rates.AsSpan(0, successors.Count);
 
     public override bool[] Happens() => row.Happens();
 
@@ -29,29 +29,27 @@ internal sealed class KeyedRows<TKey>(KeySet<TKey> states, SuccessorRow<TKey> ro
         }
 
         states.CopyKeys(first, keys.AsSpan(0, count));
-        (rowCount, entryCount) = (count, 0);
+        rowCount = count;
+        successors.Clear();
         for (var i = 0; i < count; i++)
         {
             row.Find(keys[i]);
             counts[i] = row.Count;
-            if (entryCount + row.Count > targets.Length)
+            if (successors.Count + row.Count > rates.Length)
             {
-                var room = (int)Math.Min(Array.MaxLength, 2L * (entryCount + row.Count));
-                Array.Resize(ref targets, room);
-                Array.Resize(ref rates, room);
+                Array.Resize(ref rates, (int)Math.Min(Array.MaxLength, 2L * (successors.Count + row.Count)));
             }
 
-            var found = targets.AsSpan(entryCount, row.Count);
-            states.Find(row.Keys, found);
-            if (found.Contains(-1))
-            {
-                return false;
-            }
-
-            row.Rates.CopyTo(rates.AsSpan(entryCount));
-            entryCount += row.Count;
+            row.Rates.CopyTo(rates.AsSpan(successors.Count));
+            successors.Add(row.Keys);
         }
 
-        return true;
+        if (targets.Length < successors.Count)
+        {
+            targets = new int[rates.Length];
+        }
+
+        states.Find(successors.Keys, targets);
+        return !Targets.Contains(-1);
     }
 }
