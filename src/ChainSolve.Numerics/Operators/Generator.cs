@@ -1,4 +1,5 @@
 using ChainSolve.Numerics.Arithmetic;
+using ChainSolve.Numerics.Structure;
 
 namespace ChainSolve.Numerics.Operators;
 
@@ -11,13 +12,14 @@ public sealed class Generator
 {
     private readonly Lazy<SparseRows> columns;
     private readonly SharedPattern pattern;
+    private ChainClasses? classes;
 
-    internal Generator(SparseRows rows, SharedPattern? pattern = null)
+    internal Generator(SparseRows rows, double[]? exitRates = null, SharedPattern? pattern = null)
     {
         Rows = rows;
         this.pattern = pattern ?? new SharedPattern(rows);
         columns = new Lazy<SparseRows>(() => Rows.Transpose(this.pattern.Transposed));
-        ExitRates = rows.RowSums();
+        ExitRates = exitRates ?? rows.RowSums();
         foreach (var rate in ExitRates)
         {
             MaxExitRate = Math.Max(MaxExitRate, rate);
@@ -48,6 +50,13 @@ public sealed class Generator
     /// <summary>The sum of the rates out of each state.</summary>
     internal double[] ExitRates { get; }
 
+    /// <summary>The classes of all states; null until somebody has found them. Several threads may each find them, and one result is kept.</summary>
+    internal ChainClasses? Classes
+    {
+        get => Volatile.Read(ref classes);
+        set => Volatile.Write(ref classes, value);
+    }
+
     /// <summary>What follows from the places of the entries alone, shared with refilled twins.</summary>
     internal SharedPattern Pattern => pattern;
 
@@ -57,7 +66,17 @@ public sealed class Generator
     /// <param name="rates">The rate of each entry; finite and not negative. A zero stays in the pattern.</param>
     /// <remarks>The arrays are taken over: do not write to them afterwards. Costs one pass over the entries.</remarks>
     /// <exception cref="ArgumentException">The arrays do not describe a generator; the message says where.</exception>
-    public static Generator FromRows(long[] rowOffsets, int[] targets, double[] rates)
+    public static Generator FromRows(long[] rowOffsets, int[] targets, double[] rates) => FromRows(rowOffsets, targets, rates, CancellationToken.None);
+
+    /// <summary>Makes a generator of rows that are at hand, without sorting and without copying; can be stopped.</summary>
+    /// <param name="rowOffsets">The entries of row i stand at <c>[rowOffsets[i], rowOffsets[i + 1])</c>; one more than there are states.</param>
+    /// <param name="targets">The state that each entry leads to; ascending within a row, never the row's own state.</param>
+    /// <param name="rates">The rate of each entry; finite and not negative. A zero stays in the pattern.</param>
+    /// <param name="cancellation">Stops the pass over the entries.</param>
+    /// <remarks>The arrays are taken over: do not write to them afterwards. Costs one pass over the entries.</remarks>
+    /// <exception cref="ArgumentException">The arrays do not describe a generator; the message says where.</exception>
+    /// <exception cref="OperationCanceledException">The token was cancelled.</exception>
+    public static Generator FromRows(long[] rowOffsets, int[] targets, double[] rates, CancellationToken cancellation)
     {
         ArgumentNullException.ThrowIfNull(rowOffsets);
         ArgumentNullException.ThrowIfNull(targets);
@@ -75,9 +94,7 @@ public sealed class Generator
         }
 
         var rows = new SparseRows(rowOffsets.Length - 1, rowOffsets, targets, rates);
-        rows.CheckPlaces();
-        rows.CheckValues(nameof(rates));
-        return new Generator(rows);
+        return new Generator(rows, rows.Check(nameof(rates), cancellation));
     }
 
     /// <summary>The rate from one state to another; 0 where there is no transition.</summary>
@@ -143,7 +160,7 @@ public sealed class Generator
 
         var rows = new SparseRows(Rows.Count, Rows.Offsets, Rows.Targets, rates);
         rows.CheckValues(nameof(rates));
-        return new Generator(rows, pattern);
+        return new Generator(rows, pattern: pattern);
     }
 
     private IEnumerable<Transition> Walk(int state)

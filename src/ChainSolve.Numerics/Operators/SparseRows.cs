@@ -4,6 +4,8 @@ namespace ChainSolve.Numerics.Operators;
 /// <remarks>Immutable by contract: nobody writes into the arrays after construction.</remarks>
 internal sealed class SparseRows
 {
+    private const int RowsBetweenLooks = 1 << 16;
+
     public SparseRows(int count, long[] offsets, int[] targets, double[] values)
     {
         Count = count;
@@ -90,15 +92,24 @@ internal sealed class SparseRows
         return new SparseRows(Count, places.Offsets, places.Targets, values);
     }
 
-    public void CheckPlaces()
+    /// <summary>Checks places and values in one pass.</summary>
+    /// <returns>The sums of the rows, as <see cref="RowSums"/> gives them.</returns>
+    public double[] Check(string valuesName, CancellationToken cancellation)
     {
+        var sums = new double[Count];
         for (var i = 0; i < Count; i++)
         {
+            if (i % RowsBetweenLooks == 0)
+            {
+                cancellation.ThrowIfCancellationRequested();
+            }
+
             if (Offsets[i + 1] < Offsets[i] || Offsets[i + 1] > EntryCount)
             {
                 throw new ArgumentException($"The offsets fall or run past the end at state {i}.");
             }
 
+            var (last, sum) = (-1, 0.0);
             for (var e = Offsets[i]; e < Offsets[i + 1]; e++)
             {
                 var target = Targets[e];
@@ -107,22 +118,35 @@ internal sealed class SparseRows
                     throw new ArgumentException($"State {i} has a transition to {target}; it must be another state from 0 to {Count - 1}.");
                 }
 
-                if (e > Offsets[i] && target <= Targets[e - 1])
+                if (target <= last)
                 {
-                    throw new ArgumentException($"The targets of state {i} do not ascend: {Targets[e - 1]} is followed by {target}.");
+                    throw new ArgumentException($"The targets of state {i} do not ascend: {last} is followed by {target}.");
                 }
+
+                CheckValue(e, valuesName);
+                last = target;
+                sum += Values[e];
             }
+
+            sums[i] = sum;
         }
+
+        return sums;
     }
 
     public void CheckValues(string name)
     {
         for (long e = 0; e < EntryCount; e++)
         {
-            if (!double.IsFinite(Values[e]) || Values[e] < 0)
-            {
-                throw new ArgumentException($"Rate {e} is {Values[e]}; rates must be finite and not negative.", name);
-            }
+            CheckValue(e, name);
+        }
+    }
+
+    private void CheckValue(long entry, string name)
+    {
+        if (!double.IsFinite(Values[entry]) || Values[entry] < 0)
+        {
+            throw new ArgumentException($"Rate {entry} is {Values[entry]}; rates must be finite and not negative.", name);
         }
     }
 }

@@ -6,6 +6,8 @@ namespace ChainSolve.Numerics.Structure;
 /// <remarks>Immutable by contract; safe to share between threads. Rates that are stored as zero count as absent.</remarks>
 public sealed class ChainClasses
 {
+    private const int StatesBetweenLooks = 1 << 16;
+
     private ChainClasses(int[][] recurrent, int[] transient, int[] classOf)
     {
         Recurrent = recurrent;
@@ -28,7 +30,7 @@ public sealed class ChainClasses
     /// <summary>Whether every state can be reached from every other.</summary>
     public bool IsIrreducible => Recurrent.Count == 1 && Transient.Length == 0;
 
-    /// <summary>Finds the classes. Costs one pass over the transitions and 28 bytes a state while it runs.</summary>
+    /// <summary>Finds the classes. Costs one pass over the transitions and 28 bytes a state while it runs; those of all states are kept with the chain.</summary>
     /// <param name="generator">The chain.</param>
     /// <param name="alive">
     /// The states that are looked at; null for all. A rate to a state outside counts as a way out, so that a class is
@@ -44,12 +46,26 @@ public sealed class ChainClasses
             throw new ArgumentException($"The mask has {alive.Length} entries, the chain {generator.StateCount} states.", nameof(alive));
         }
 
+        return alive is null
+            ? generator.Classes ??= OneClass.IsProved(generator.Rows, cancellation) ? All(generator.StateCount) : Find(generator, null, cancellation)
+            : Find(generator, alive, cancellation);
+    }
+
+    private static ChainClasses All(int count) => new([[.. Enumerable.Range(0, count)]], [], new int[count]);
+
+    private static ChainClasses Find(Generator generator, bool[]? alive, CancellationToken cancellation)
+    {
         var components = StrongComponents.Find(generator, alive, cancellation);
         var component = components.ComponentOf;
         var isLeft = new bool[components.Count];
         var rows = generator.Rows;
         for (var i = 0; i < rows.Count; i++)
         {
+            if (i % StatesBetweenLooks == 0)
+            {
+                cancellation.ThrowIfCancellationRequested();
+            }
+
             for (var e = rows.Offsets[i]; component[i] >= 0 && e < rows.Offsets[i + 1]; e++)
             {
                 isLeft[component[i]] |= rows.Values[e] > 0 && component[rows.Targets[e]] != component[i];

@@ -8,6 +8,8 @@ namespace ChainSolve.Numerics.Structure;
 /// </summary>
 internal sealed class StrongComponents
 {
+    private const int StatesBetweenLooks = 1 << 16;
+
     private StrongComponents(int[] componentOf, int count)
     {
         ComponentOf = componentOf;
@@ -40,7 +42,6 @@ internal sealed class StrongComponents
                 continue;
             }
 
-            cancellation.ThrowIfCancellationRequested();
             Enter(root);
             while (pathLength > 0)
             {
@@ -97,6 +98,11 @@ internal sealed class StrongComponents
 
         void Enter(int state)
         {
+            if (visited % StatesBetweenLooks == 0)
+            {
+                cancellation.ThrowIfCancellationRequested();
+            }
+
             number[state] = low[state] = ++visited;
             nextEntry[state] = rows.Offsets[state];
             path[pathLength++] = state;

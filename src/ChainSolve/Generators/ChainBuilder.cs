@@ -43,8 +43,8 @@ internal static class ChainBuilder
 
         var rows = new RowFiller(states, givens, null, context).Fill()
             ?? throw new InvalidOperationException("A state leads to one that was not explored.");
-        var generator = Generator.FromRows(rows.Offsets, rows.Targets, rows.Rates);
-        return new ExploredChain(model, givens, options, starts, states, rows, generator, isRefilled: false);
+        var generator = Generator.FromRows(rows.Offsets, rows.Targets, rows.Rates, context.Cancellation);
+        return new ExploredChain(model, givens, options, starts, states, rows, generator, isRefilled: false, context.Cancellation);
     }
 
     /// <summary>
@@ -77,7 +77,8 @@ internal static class ChainBuilder
                     chain.States,
                     rows,
                     chain.Generator.WithRates(rows.Rates),
-                    isRefilled: true)
+                    isRefilled: true,
+                    context.Cancellation)
                 : null;
         }
         catch (StateFaultException)

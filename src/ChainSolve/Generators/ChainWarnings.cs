@@ -9,7 +9,7 @@ namespace ChainSolve.Generators;
 /// <summary>What a reader should know of the states of a chain.</summary>
 internal static class ChainWarnings
 {
-    public static IReadOnlyList<Diagnostic> Of(Chain chain, bool[] happens)
+    public static IReadOnlyList<Diagnostic> Of(Chain chain, bool[] happens, CancellationToken cancellation)
     {
         var model = chain.Model;
         var warnings = new List<Diagnostic>();
@@ -22,7 +22,7 @@ internal static class ChainWarnings
             }
         }
 
-        var classes = ChainClasses.Of(chain.Generator);
+        var classes = ChainClasses.Of(chain.Generator, null, cancellation);
         var absorbing = classes.Absorbing.ToList();
         if (absorbing.Count > 0 && chain.Generator.StateCount > 1)
         {

@@ -23,7 +23,8 @@ internal sealed class ExploredChain : Chain
         StateTable states,
         GeneratorRows rows,
         Generator generator,
-        bool isRefilled)
+        bool isRefilled,
+        CancellationToken cancellation)
     {
         (Model, Givens, States, Rows, Generator, IsRefilled, this.options) = (model, givens, states, rows, generator, isRefilled, options);
         Start = new double[states.Count];
@@ -32,7 +33,7 @@ internal sealed class ExploredChain : Chain
             Start[states.Find(marking)] += probability;
         }
 
-        Warnings = ChainWarnings.Of(this, rows.Happens);
+        Warnings = ChainWarnings.Of(this, rows.Happens, cancellation);
     }
 
     public override BoundModel Model { get; }

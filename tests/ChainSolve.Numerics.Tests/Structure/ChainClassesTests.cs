@@ -65,6 +65,37 @@ public class ChainClassesTests
         Assert.Equal(Enumerable.Range(0, chain.Count).Except(expected.SelectMany(c => c)), classes.Transient);
     });
 
+    [Fact]
+    public void Of_AllStates_IsFoundOnce()
+    {
+        var chain = Chains.Of(3, (0, 1, 1), (1, 2, 1), (2, 0, 1));
+
+        Assert.Same(ChainClasses.Of(chain), ChainClasses.Of(chain));
+        Assert.NotSame(ChainClasses.Of(chain), ChainClasses.Of(chain.WithRates([1, 1, 0])));
+        Assert.False(ChainClasses.Of(chain.WithRates([1, 1, 0])).IsIrreducible);
+    }
+
+    [Property(MaxTest = 300)]
+    public FsCheck.Property OneClass_AnyChain_IsProvedOnlyWhereItIs() => Prop.ForAll(RandomChains.Any(1, 10), chain =>
+    {
+        var isOne = chain.Reference.ClosedClasses().Any(c => c.Length == chain.Count);
+        Assert.True(isOne || !OneClass.IsProved(Chains.Of(chain).Rows, CancellationToken.None));
+    });
+
+    [Theory]
+    [InlineData(1)]
+    [InlineData(-1)]
+    [InlineData(7)]
+    [InlineData(390)]
+    public void Of_ARingInAnyOrder_IsOneClass(int stride)
+    {
+        // Where the numbers run against the ring, sweeps do not get around it and the search does.
+        const int Count = 1009;
+        var ring = Enumerable.Range(0, Count).Select(i => (i, (i + stride + Count) % Count, 1.0)).ToArray();
+        Assert.True(ChainClasses.Of(Chains.Of(Count, ring)).IsIrreducible);
+        Assert.Equal(stride is 1 or -1, OneClass.IsProved(Chains.Of(Count, ring).Rows, CancellationToken.None));
+    }
+
     [Property(MaxTest = 200)]
     public FsCheck.Property Reachability_AnyChain_AgreesBothWays() => Prop.ForAll(RandomChains.Any(1, 10), chain =>
     {
