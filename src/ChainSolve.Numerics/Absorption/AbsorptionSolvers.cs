@@ -1,4 +1,6 @@
 using ChainSolve.Numerics.Iteration;
+using ChainSolve.Numerics.Multilevel;
+using ChainSolve.Numerics.Stationary;
 
 namespace ChainSolve.Numerics.Absorption;
 
@@ -10,7 +12,12 @@ public static class AbsorptionSolvers
 
     /// <summary>The methods of this library.</summary>
     public static IReadOnlyList<IAbsorptionSolver> All { get; } =
-        [new GthAbsorptionSolver(), new SparseGthAbsorptionSolver(), new SweepAbsorptionSolver()];
+    [
+        new GthAbsorptionSolver(),
+        new SparseGthAbsorptionSolver(),
+        new RestartAbsorptionSolver(new SweepSolver("gauss-seidel", false), 1000),
+        new RestartAbsorptionSolver(new MultilevelSolver(), 2000),
+    ];
 
     /// <summary>Chooses a method.</summary>
     /// <param name="problem">What is asked.</param>

@@ -1,4 +1,5 @@
 using ChainSolve.Numerics.Iteration;
+using ChainSolve.Numerics.Multilevel;
 using ChainSolve.Numerics.Operators;
 
 namespace ChainSolve.Numerics.Stationary;
@@ -12,7 +13,7 @@ public static class StationarySolvers
 
     /// <summary>The methods of this library.</summary>
     public static IReadOnlyList<IStationarySolver> All { get; } =
-        [new GthSolver(), new SparseGthSolver(), new DetailedBalanceSolver(), new SweepSolver("gauss-seidel", false), new SweepSolver("sor", true)];
+        [new GthSolver(), new SparseGthSolver(), new DetailedBalanceSolver(), new SweepSolver("gauss-seidel", false), new SweepSolver("sor", true), new MultilevelSolver()];
 
     /// <summary>Chooses a method for an irreducible chain.</summary>
     /// <param name="generator">The chain.</param>

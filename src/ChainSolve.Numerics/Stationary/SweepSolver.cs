@@ -1,4 +1,3 @@
-using ChainSolve.Numerics.Arithmetic;
 using ChainSolve.Numerics.Iteration;
 using ChainSolve.Numerics.Operators;
 
@@ -20,7 +19,6 @@ internal sealed class SweepSolver(string name, bool overRelaxes) : IStationarySo
     // So many entries are worked through at most, in so many cycles.
     private const double MaxWork = 5e10;
     private const double MaxCycles = 50_000;
-    private const double Unit = 1.12e-16;
 
     public string Name => name;
 
@@ -28,14 +26,9 @@ internal sealed class SweepSolver(string name, bool overRelaxes) : IStationarySo
 
     public StationaryVector Solve(Generator generator, SolveContext context)
     {
-        if (Array.IndexOf(generator.ExitRates, 0) is var stuck and >= 0 && generator.StateCount > 1)
+        if (Normalised.Trivial(generator) is { } single)
         {
-            throw new ArgumentException($"State {stuck} is never left. Take closed classes apart before solving.", nameof(generator));
-        }
-
-        if (generator.StateCount == 1)
-        {
-            return new StationaryVector { Probabilities = [1], RelativeBound = 0, IsProved = true, How = "one state" };
+            return single;
         }
 
         var sweeps = new StationarySweeps(generator);
@@ -58,13 +51,9 @@ internal sealed class SweepSolver(string name, bool overRelaxes) : IStationarySo
                 $"it shrinks by {1 - watch.Contraction:G2} of itself in two sweeps.");
         }
 
-        var sum = LongSum.Of(sweeps.X);
-        return new StationaryVector
-        {
-            Probabilities = Array.ConvertAll(sweeps.X, x => x / sum),
-            RelativeBound = watch.Error + (4 * Unit),
-            IsProved = false,
-            How = $"{2 * sweeps.Cycles} sweeps of {name}, contraction {watch.Contraction:G6} in two sweeps{watch.Note}",
-        };
+        return Normalised.Estimated(
+            sweeps.X,
+            watch.Error,
+            $"{2 * sweeps.Cycles} sweeps of {name}, contraction {watch.Contraction:G6} in two sweeps{watch.Note}");
     }
 }

@@ -1,6 +1,7 @@
 using ChainSolve.Numerics.Absorption;
 using ChainSolve.Numerics.Estimates;
 using ChainSolve.Numerics.Iteration;
+using ChainSolve.Numerics.Stationary;
 using ChainSolve.Numerics.Tests.Support;
 using ChainSolve.Tests.Shared.Chains;
 using ChainSolve.Tests.Shared.Reference;
@@ -9,19 +10,29 @@ using FsCheck.Xunit;
 
 namespace ChainSolve.Numerics.Tests.Absorption;
 
-public class SweepAbsorptionSolverTests
+public class RestartAbsorptionSolverTests
 {
-    private static readonly SolverOptions Sweeps = new() { Absorption = "gauss-seidel" };
+    private static readonly string[] Names = ["gauss-seidel", "multilevel"];
+
+    private static readonly RestartAbsorptionSolver Sweeper = new(new SweepSolver("gauss-seidel", false), 1000);
 
     [Property(MaxTest = 200)]
     public FsCheck.Property Solve_AnyChainWithOneEnd_IsWithinItsBounds() => Prop.ForAll(RandomChains.Any(1, 10), chain =>
+    {
+        foreach (var name in Names)
+        {
+            IsWithinItsBounds(chain, name);
+        }
+    });
+
+    private static void IsWithinItsBounds(RandomChain chain, string name)
     {
         var ends = chain.Reference.ClosedClasses();
         bool[] alive = [.. Enumerable.Range(0, chain.Count).Select(i => !ends[0].Contains(i))];
         FirstPassage passage;
         try
         {
-            passage = FirstPassage.Solve(Chains.Of(chain), chain.Start, alive, 3, Sweeps);
+            passage = FirstPassage.Solve(Chains.Of(chain), chain.Start, alive, 3, new SolverOptions { Absorption = name });
         }
         catch (NotConvergedException)
         {
@@ -36,17 +47,19 @@ public class SweepAbsorptionSolverTests
                 Holds(passage.Moment(k), chain.Reference.Moment(chain.Start, ends[0], k));
             }
         }
-    });
+    }
 
     [Theory]
-    [InlineData(1e-3)]
-    [InlineData(1e-6)]
-    [InlineData(1e-12)]
-    public void MeanTime_OneOfThree_DoesNotMindHowRareTheEndIs(double failure)
+    [InlineData("gauss-seidel", 1e-3)]
+    [InlineData("gauss-seidel", 1e-6)]
+    [InlineData("gauss-seidel", 1e-12)]
+    [InlineData("multilevel", 1e-3)]
+    [InlineData("multilevel", 1e-12)]
+    public void MeanTime_OneOfThree_DoesNotMindHowRareTheEndIs(string name, double failure)
     {
         // (11 l² + 7 l m + 2 m²) / (6 l³) with a crew for each: Trivedi 2002 (from memory).
         var chain = Chains.Of(4, (0, 1, 3 * failure), (1, 2, 2 * failure), (2, 3, failure), (1, 0, 1), (2, 1, 2));
-        var passage = FirstPassage.Solve(chain, [1, 0, 0, 0], [true, true, true, false], 2, Sweeps);
+        var passage = FirstPassage.Solve(chain, [1, 0, 0, 0], [true, true, true, false], 2, new SolverOptions { Absorption = name });
         var expected = ((11 * failure * failure) + (7 * failure) + 2) / (6 * failure * failure * failure);
 
         Assert.InRange(Chains.Distance(passage.MeanTime.Value, expected), 0, 1e-14);
@@ -54,14 +67,16 @@ public class SweepAbsorptionSolverTests
         Assert.InRange(passage.Moment(2).Bound, 0, 1e-11 * passage.Moment(2).Value);
     }
 
-    [Fact]
-    public void Solve_ALargerGrid_AgreesWithTheElimination()
+    [Theory]
+    [InlineData("gauss-seidel")]
+    [InlineData("multilevel")]
+    public void Solve_ALargerGrid_AgreesWithTheElimination(string name)
     {
         var grid = Chains.Lattice([20, 20, 10], (a, l) => 0.02 * (a + 1) * (20 - l), (a, _) => 0.9 + (0.1 * a));
         bool[] alive = [.. Enumerable.Range(0, grid.StateCount).Select(i => (i % 20) + (i / 20 % 20) + (i / 400) < 18)];
         var start = Chains.StartAt(grid.StateCount, 0);
         var expected = FirstPassage.Solve(grid, start, alive, 3, new SolverOptions { Absorption = "sparse-gth" });
-        var actual = FirstPassage.Solve(grid, start, alive, 3, Sweeps);
+        var actual = FirstPassage.Solve(grid, start, alive, 3, new SolverOptions { Absorption = name });
 
         for (var k = 1; k <= 3; k++)
         {
@@ -75,7 +90,7 @@ public class SweepAbsorptionSolverTests
     [Fact]
     public void Solve_EarningsWithoutAStart_AreThere()
     {
-        var result = new SweepAbsorptionSolver().Solve(
+        var result = Sweeper.Solve(
             new AbsorptionProblem { Generator = Chains.Of(3, (0, 1, 2), (1, 0, 1), (1, 2, 1)), Alive = [true, true, false], Rewards = [[1, 0, 0]] },
             SolveContext.Default);
 
@@ -87,7 +102,7 @@ public class SweepAbsorptionSolverTests
 
     [Fact]
     public void Solve_AGroupThatIsNeverLeft_NamesAState() => Assert.Contains("State 1", Assert.Throws<ArgumentException>(
-        () => new SweepAbsorptionSolver().Solve(
+        () => Sweeper.Solve(
             new AbsorptionProblem { Generator = Chains.Of(3, (0, 1, 2), (0, 2, 1)), Alive = [true, true, false], Starts = [[1, 0, 0]] },
             SolveContext.Default)).Message, StringComparison.Ordinal);
 

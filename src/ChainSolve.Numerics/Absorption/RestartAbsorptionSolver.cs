@@ -7,28 +7,28 @@ using ChainSolve.Numerics.Structure;
 namespace ChainSolve.Numerics.Absorption;
 
 /// <summary>
-/// Gauss-Seidel sweeps for sets of states that are too large to be eliminated. Sojourn times are stationary weights of
+/// An iteration for sets of states that are too large to be eliminated. Sojourn times are stationary weights of
 /// the chain that starts again where it ends; earnings are sojourn times of the chain run backwards in time.
 /// </summary>
 /// <remarks>
 /// Backwards: with sojourn times x, the chain with rates x_i q_ij / x_j from j to i has, from the start x r, the
 /// sojourn times x m, where m are the earnings from r. The bound is estimated.
 /// </remarks>
-internal sealed class SweepAbsorptionSolver : IAbsorptionSolver
+/// <param name="iteration">The method for stationary weights; its name is that of this one too.</param>
+/// <param name="costPerEntry">About how many operations it takes for a transition.</param>
+internal sealed class RestartAbsorptionSolver(IStationarySolver iteration, double costPerEntry) : IAbsorptionSolver
 {
-    private readonly SweepSolver sweeps = new("gauss-seidel", false);
-
-    public string Name => "gauss-seidel";
+    public string Name => iteration.Name;
 
     public double Cost(AbsorptionProblem problem) =>
-        1000.0 * (problem.Generator.TransitionCount + problem.Generator.StateCount) * (1 + problem.Starts.Count + problem.Rewards.Count);
+        costPerEntry * (problem.Generator.TransitionCount + problem.Generator.StateCount) * (1 + problem.Starts.Count + problem.Rewards.Count);
 
     public AbsorptionResult Solve(AbsorptionProblem problem, SolveContext context)
     {
         CheckLeft(problem);
         var chain = AliveChain.Of(problem);
         var count = problem.Generator.StateCount;
-        var run = new Run(chain, sweeps, context);
+        var run = new Run(chain, iteration, context);
         return new AbsorptionResult
         {
             Sojourns = [.. problem.Starts.Select(s => chain.Restriction.Spread(run.Sojourns(chain.Restriction.Take(s)), count))],
@@ -51,7 +51,7 @@ internal sealed class SweepAbsorptionSolver : IAbsorptionSolver
     }
 
     /// <summary>One call of the solver; keeps the weights that several right sides share.</summary>
-    private sealed class Run(AliveChain chain, SweepSolver sweeps, SolveContext context)
+    private sealed class Run(AliveChain chain, IStationarySolver iteration, SolveContext context)
     {
         private readonly SparseRows rows = chain.Restriction.Generator.Rows;
         private readonly double[] toEnd = Array.ConvertAll(chain.ToEnd, e => e.ToDouble());
@@ -122,13 +122,14 @@ internal sealed class SweepAbsorptionSolver : IAbsorptionSolver
         /// <summary>The sojourn times of a chain from start shares, over the states that the start reaches.</summary>
         private (double[] Times, double Bound) Restarted(SparseRows between, double[] end, double[] start)
         {
-            var whole = RestartedChain.Of(between, end, start, Math.Max(1e-290, chain.Restriction.Generator.MaxExitRate));
+            var fastest = chain.Restriction.Generator.MaxExitRate;
+            var whole = RestartedChain.Of(between, end, start, fastest > 0 ? fastest : end.Max());
             var last = between.Count;
             bool[] from = new bool[last + 1];
             from[last] = true;
             var reached = Reachability.From(whole, from);
             var part = Restriction.Of(whole, [.. Enumerable.Range(0, last + 1).Where(i => reached[i])]);
-            var vector = sweeps.Solve(part.Generator, context);
+            var vector = iteration.Solve(part.Generator, context);
             var perCycle = vector.Probabilities[^1] * whole.ExitRates[last];
             var times = part.Spread(vector.Probabilities, last + 1)[..last];
             How = vector.How + ", on the chain that starts again at its end";
