@@ -22,6 +22,7 @@ internal sealed class EffectPlan
         Assignments = [.. transition.Effects.OfType<AssignEffect>().Select(a => (a.Variable, Amount.Of(a.Value, outputs)))];
         Program = outputs.Count == 0 ? null : ExprCompiler.Compile(outputs);
         IsPlain = Moves.All(m => m.Targets.Length == 1);
+        Drawn = IsPlain ? null : Moves.FirstOrDefault(m => m.Targets.Length > 1);
         Steps = FixedSteps(counters);
         Needs = Steps is null ? null : NeedsOf(Steps, counters);
     }
@@ -40,20 +41,31 @@ internal sealed class EffectPlan
 
     /// <summary>
     /// By how much each counter changes, where the transition moves fixed numbers of replicas, adds fixed numbers to counters and does nothing
-    /// else, so that it changes the key of every state by the same amount; null for others.
+    /// else, so that it changes the key of every state by the same amount; null for others. One replica may go where it is drawn to, by chances
+    /// that are the same in every state: then there is such an amount for each target.
     /// </summary>
     public (int Counter, int Step)[]? Steps { get; }
 
-    /// <summary>Where the variables have to be for such a transition to be possible; null for other transitions.</summary>
+    /// <summary>The first line whose target is drawn; null where no target is.</summary>
+    public MovePlan? Drawn { get; }
+
+    /// <summary>Whether the transition changes the key of every state by the same amount, if it is possible.</summary>
+    public bool IsShift => Needs is not null && IsPlain;
+
+    /// <summary>Where the variables have to be for a transition with <see cref="Steps"/> to be possible; null for other transitions.</summary>
     public VariableRange[]? Needs { get; }
 
     private (int Counter, int Step)[]? FixedSteps(CounterRange[] counters)
     {
         var steps = Transition.Effects.OfType<AssignEffect>().Select(e => StepOf(e, counters)).ToList();
-        var isFixed = IsPlain && steps.All(s => s is not null)
+        var isFixed = (IsPlain || IsOneDraw()) && steps.All(s => s is not null)
             && Moves.All(m => m is { Count: { Output: < 0, Fixed: >= 0 and <= int.MaxValue } count, Effect.IfAny: false } && count.Fixed == Math.Floor(count.Fixed));
         return isFixed ? [.. steps.Select(s => s!.Value)] : null;
     }
+
+    private bool IsOneDraw() =>
+        Moves.Count(m => m.Targets.Length > 1) == 1 && Drawn!.Count is { Output: < 0, Fixed: 1 }
+        && ExprReads.Of(Drawn.Effect.Targets.Select(t => t.Probability).OfType<Expr>()).Variables.Count == 0;
 
     // n = n + 1, n = n - 2, n = 3 + n; no more than the range is wide, so that its ends less the step are whole numbers that can be kept.
     private static (int Counter, int Step)? StepOf(AssignEffect effect, CounterRange[] counters)

@@ -18,12 +18,7 @@ internal sealed class EffectRunner(BoundModel model, StateLayout layout, double[
     /// <summary>Adds the successors that the transition leads to.</summary>
     public void Run(EffectPlan plan, int transition, double rate, ReadOnlySpan<int> before)
     {
-        if (plan.Program is { } program)
-        {
-            outputs = outputs.Length >= program.OutputCount ? outputs : new double[program.OutputCount];
-            program.Run(before, givens, outputs);
-        }
-
+        RunProgram(plan, before);
         before.CopyTo(after);
         Assign(plan);
         if (plan.Moves.Length == 0)
@@ -51,6 +46,26 @@ internal sealed class EffectRunner(BoundModel model, StateLayout layout, double[
         }
 
         successors.Add(after, rate, transition);
+    }
+
+    /// <summary>By what the rate is multiplied for each target of a line by which one replica goes; its chances do not depend on the state.</summary>
+    /// <exception cref="StateFaultException">The chances are none.</exception>
+    public double[] Factors(EffectPlan plan, MovePlan move)
+    {
+        Array.Clear(after);
+        RunProgram(plan, after);
+        var chances = ChancesOf(plan, move);
+        var rest = RestOf(chances);
+        return [.. chances.Select(c => c / rest[0])];
+    }
+
+    private void RunProgram(EffectPlan plan, ReadOnlySpan<int> before)
+    {
+        if (plan.Program is { } program)
+        {
+            outputs = outputs.Length >= program.OutputCount ? outputs : new double[program.OutputCount];
+            program.Run(before, givens, outputs);
+        }
     }
 
     private void Assign(EffectPlan plan)
@@ -146,14 +161,8 @@ internal sealed class EffectRunner(BoundModel model, StateLayout layout, double[
             return;
         }
 
-        // What is left for a target and all behind it, added from the end so that small chances keep their digits.
         var chances = ChancesOf(plan, move);
-        var rest = (double[])chances.Clone();
-        for (var i = rest.Length - 2; i >= 0; i--)
-        {
-            rest[i] += rest[i + 1];
-        }
-
+        var rest = RestOf(chances);
         Share(0, counts[line], rate);
 
         void Share(int target, int remaining, double weight)
@@ -196,6 +205,18 @@ internal sealed class EffectRunner(BoundModel model, StateLayout layout, double[
                 after[move.Targets[target].To] -= taken;
             }
         }
+    }
+
+    // What is left for a target and all behind it, added from the end so that small chances keep their digits.
+    private static double[] RestOf(double[] chances)
+    {
+        var rest = (double[])chances.Clone();
+        for (var i = rest.Length - 2; i >= 0; i--)
+        {
+            rest[i] += rest[i + 1];
+        }
+
+        return rest;
     }
 
     private void AddDrawn(EffectPlan plan, int transition, double rate)

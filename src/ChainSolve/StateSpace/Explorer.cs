@@ -14,6 +14,9 @@ internal sealed class Explorer<TKey>
 {
     private const int StatesOfARound = 8192;
 
+    // Each worker keeps a list for each other one.
+    private const int MostThreads = 32;
+
     // Fewer states than this are sooner expanded than threads told of them.
     private const int FewStates = 512;
 
@@ -29,7 +32,7 @@ internal sealed class Explorer<TKey>
     {
         (this.keys, this.givens, this.context) = (keys, givens, context);
         this.maxStates = Math.Min(maxStates, Array.MaxLength);
-        states = KeySets.For<TKey>(keys.Plans.Layout, threads);
+        states = KeySets.For<TKey>(keys.Plans.Layout, threads, context.Cancellation);
         workers = [.. Enumerable.Range(0, threads).Select(i => new ExploreWorker<TKey>(keys, givens, states, i, context.Cancellation))];
         report = new ExploreReport(context.Progress);
     }
@@ -50,7 +53,7 @@ internal sealed class Explorer<TKey>
         {
             try
             {
-                return new Explorer<TKey>(keys, givens, maxStates, context.Threads, context).Explore(starts);
+                return new Explorer<TKey>(keys, givens, maxStates, Math.Min(context.Threads, MostThreads), context).Explore(starts);
             }
             catch (LimitExceededException)
             {
@@ -112,7 +115,7 @@ internal sealed class Explorer<TKey>
             var marking = new int[keys.Plans.Model.Variables.Count];
             keys.Codec.Unpack(found.Key, marking);
             var finder = new SuccessorFinder(keys.Plans, givens, context.Cancellation);
-            throw StateFaults.Tell(keys.Plans.Model, found.Fault, marking, new WayTo<TKey>(keys, finder).Find(starts, found.Key));
+            throw StateFaults.Tell(keys.Plans.Model, found.Fault, marking, new WayTo<TKey>(keys, finder).Find(starts, found.Key, context.Cancellation));
         }
     }
 }

@@ -22,8 +22,9 @@ internal sealed class KeyBlocks<TKey> : KeySet<TKey>
     private int[] before = [];
 
     /// <param name="shards">The number of shards.</param>
-    public KeyBlocks(int shards)
-        : base(shards) => this.shards = [.. Enumerable.Range(0, shards).Select(_ => new Shard())];
+    /// <param name="cancellation">Stops the set amid growing.</param>
+    public KeyBlocks(int shards, CancellationToken cancellation)
+        : base(shards) => this.shards = [.. Enumerable.Range(0, shards).Select(_ => new Shard(cancellation))];
 
     public override long Bytes => shards.Sum(s => s.Bytes) + (order.LongLength * (KeyBytes + 4L));
 
@@ -35,7 +36,7 @@ internal sealed class KeyBlocks<TKey> : KeySet<TKey>
         var count = 0;
         foreach (var shard in shards)
         {
-            count += shard.CopyBlocks(order.AsSpan(count), cancellation);
+            count += shard.CopyBlocks(order.AsSpan(count));
             shard.Close();
         }
 
@@ -91,7 +92,7 @@ internal sealed class KeyBlocks<TKey> : KeySet<TKey>
     }
 
     /// <summary>Blocks with open addressing and linear probing.</summary>
-    private sealed class Shard
+    private sealed class Shard(CancellationToken cancellation)
     {
         private Block[] blocks = new Block[64];
         private int[] before = [];
@@ -157,7 +158,7 @@ internal sealed class KeyBlocks<TKey> : KeySet<TKey>
             return isNew;
         }
 
-        public int CopyBlocks(Span<TKey> numbers, CancellationToken cancellation)
+        public int CopyBlocks(Span<TKey> numbers)
         {
             var count = 0;
             for (var slot = 0; slot < blocks.Length; slot++)
@@ -201,11 +202,16 @@ internal sealed class KeyBlocks<TKey> : KeySet<TKey>
         {
             shift--;
             var grown = new Block[2L * blocks.LongLength];
-            foreach (var block in blocks)
+            for (var slot = 0; slot < blocks.Length; slot++)
             {
-                if (block.Word != 0)
+                if (slot % BlocksBetweenLooks == 0)
                 {
-                    grown[SlotOf(grown, block.Number)] = block;
+                    cancellation.ThrowIfCancellationRequested();
+                }
+
+                if (blocks[slot].Word != 0)
+                {
+                    grown[SlotOf(grown, blocks[slot].Number)] = blocks[slot];
                 }
             }
 

@@ -72,13 +72,15 @@ internal sealed class KeyCodec<TKey>
     }
 
     /// <summary>What a transition that always does the same adds to every key, modulo the size of a key; zero for other transitions.</summary>
-    public TKey ShiftOf(EffectPlan plan)
+    /// <param name="plan">The transition.</param>
+    /// <param name="target">Where the one replica goes whose target is drawn, if there is one.</param>
+    public TKey ShiftOf(EffectPlan plan, int target)
     {
         var shift = TKey.Zero;
         foreach (var move in plan.Needs is null ? [] : plan.Moves)
         {
             var count = TKey.CreateTruncating((uint)move.Count!.Value.Fixed);
-            shift = unchecked(shift + (count * UnitOf(move.Targets[0].To)) - (count * UnitOf(move.Effect.From)));
+            shift = unchecked(shift + (count * UnitOf(move.Targets[move == plan.Drawn ? target : 0].To)) - (count * UnitOf(move.Effect.From)));
         }
 
         foreach (var (counter, step) in plan.Steps ?? [])

@@ -3,7 +3,7 @@ namespace ChainSolve.StateSpace;
 /// <summary>Keys one behind the other, written in runs.</summary>
 internal sealed class KeyList<TKey>
 {
-    private TKey[] keys = new TKey[64];
+    private TKey[] keys = [];
 
     public int Count { get; private set; }
 

@@ -38,11 +38,11 @@ internal sealed class SuccessorEmitter
     /// <summary>Writes it.</summary>
     /// <param name="layout">How a key is made up.</param>
     /// <param name="rates">The instructions of the rates.</param>
-    /// <param name="steps">What each transition does, in the order of the rates; by ascending shifts.</param>
+    /// <param name="steps">What each outcome of a transition does, in the order of the rates; by ascending shifts.</param>
     /// <param name="words">How many words of 64 bits a key has, the lowest first: 1 or 2.</param>
     public static DynamicMethod Emit(StateLayout layout, InstructionList rates, IReadOnlyList<SuccessorStep> steps, int words)
     {
-        Type[] arguments = [typeof(ulong), typeof(double), typeof(double), typeof(ulong), typeof(bool)];
+        Type[] arguments = [typeof(ulong), typeof(double), typeof(double), typeof(ulong), typeof(bool), typeof(double)];
         var method = new DynamicMethod(
             "Successors", typeof(int), [.. arguments.Select(a => a.MakeByRefType())], typeof(SuccessorEmitter).Module, skipVisibility: true);
         new SuccessorEmitter(method.GetILGenerator(), words, layout.Model.Variables.Count).Emit(layout, rates, steps);
@@ -85,6 +85,11 @@ internal sealed class SuccessorEmitter
         {
             Check(step.Needs);
             Count(output);
+            if (step.IsDrawn)
+            {
+                ShareOut(output, next);
+            }
+
             if (isFirst && isLast && !step.IsStill)
             {
                 Append(step.Shift, rate);
@@ -113,6 +118,26 @@ internal sealed class SuccessorEmitter
         il.Emit(OpCodes.Ldloc, rate);
         il.Emit(OpCodes.Ldc_R8, 0.0);
         il.Emit(OpCodes.Beq, next);
+        il.Emit(OpCodes.Br, giveUp);
+        il.MarkLabel(isRate);
+    }
+
+    // An outcome with the chance 0 is none; a rate that vanishes is looked at elsewhere.
+    private void ShareOut(int output, Label next)
+    {
+        var isRate = il.DefineLabel();
+        InstructionEmitter.Address(il, 5, output * sizeof(double));
+        il.Emit(OpCodes.Ldind_R8);
+        il.Emit(OpCodes.Ldc_R8, 0.0);
+        il.Emit(OpCodes.Beq, next);
+        il.Emit(OpCodes.Ldloc, rate);
+        InstructionEmitter.Address(il, 5, output * sizeof(double));
+        il.Emit(OpCodes.Ldind_R8);
+        il.Emit(OpCodes.Mul);
+        il.Emit(OpCodes.Stloc, rate);
+        il.Emit(OpCodes.Ldloc, rate);
+        il.Emit(OpCodes.Ldc_R8, 0.0);
+        il.Emit(OpCodes.Bgt, isRate);
         il.Emit(OpCodes.Br, giveUp);
         il.MarkLabel(isRate);
     }

@@ -28,6 +28,9 @@ internal sealed class SuccessorFinder
 
     public SuccessorList Successors { get; }
 
+    /// <summary>By what the rate of a transition is multiplied for each target of the one replica that is drawn; 1 where none is.</summary>
+    public double[] Factors(EffectPlan plan) => plan.Needs is null || plan.Drawn is null ? [1] : runner.Factors(plan, plan.Drawn);
+
     /// <summary>Fills <see cref="Successors"/>; those that lead back to the same state are among them.</summary>
     /// <exception cref="StateFaultException">Something that is enabled in the state is not possible.</exception>
     /// <exception cref="LimitExceededException">More is drawn in the state than fits into memory.</exception>
@@ -56,7 +59,7 @@ internal sealed class SuccessorFinder
                     CultureInfo.InvariantCulture, $"with the rate of {model.Transitions[t].Label} the rates out of a state add to more than {LargestSum}; choose a shorter unit of time"));
             }
 
-            if (plans.Effects[t].Needs is { } needs && Has(marking, needs))
+            if (plans.Effects[t] is { IsShift: true, Needs: { } needs } && Has(marking, needs))
             {
                 Successors.AddShift(rate, t);
             }

@@ -21,11 +21,13 @@ internal sealed class SuccessorRow<TKey>
     private readonly SuccessorFinder finder;
     private readonly double[] givens;
     private readonly int[] marking;
+    private readonly bool[] happened;
     private readonly bool[] happens;
     private TKey[] rowKeys;
     private double[] rowRates;
     private Arrival[] arrivals = [];
     private SuccessorProgram<TKey>? program;
+    private double[] factors = [];
     private int untilCompiled;
 
     public SuccessorRow(SuccessorKeys<TKey> keys, GivenValues givens, CancellationToken cancellation)
@@ -35,9 +37,10 @@ internal sealed class SuccessorRow<TKey>
         var model = keys.Plans.Model;
         finder = new SuccessorFinder(keys.Plans, givens, cancellation);
         marking = new int[model.Variables.Count];
-        happens = new bool[model.Transitions.Count];
-        rowKeys = new TKey[model.Transitions.Count];
-        rowRates = new double[model.Transitions.Count];
+        happened = new bool[model.Transitions.Count];
+        happens = new bool[keys.Outcomes.Length];
+        rowKeys = new TKey[keys.Outcomes.Length];
+        rowRates = new double[keys.Outcomes.Length];
         untilCompiled = keys.Plans.BackEnd == ExprBackEnd.Compiled ? 1 : StatesUntilCompiled;
     }
 
@@ -50,13 +53,13 @@ internal sealed class SuccessorRow<TKey>
     /// <summary>Which transitions were possible in some state so far.</summary>
     public bool[] Happens()
     {
-        var byTransition = new bool[happens.Length];
+        var all = (bool[])happened.Clone();
         for (var i = 0; i < happens.Length; i++)
         {
-            byTransition[keys.Order[i]] = happens[i];
+            all[keys.Outcomes[i].Transition] |= happens[i];
         }
 
-        return byTransition;
+        return all;
     }
 
     /// <summary>Finds the successors of a state.</summary>
@@ -67,9 +70,10 @@ internal sealed class SuccessorRow<TKey>
         if (untilCompiled > 0 && --untilCompiled == 0)
         {
             program = keys.Program;
+            factors = [.. keys.Outcomes.Select(o => finder.Factors(keys.Plans.Effects[o.Transition])).Zip(keys.Outcomes, (f, o) => f[o.Target])];
         }
 
-        Count = program?.Run(key, givens, rowRates, rowKeys, happens) ?? -1;
+        Count = program?.Run(key, givens, rowRates, rowKeys, happens, factors) ?? -1;
         if (Count < 0)
         {
             keys.Codec.Unpack(key, marking);
@@ -94,7 +98,7 @@ internal sealed class SuccessorRow<TKey>
         for (var s = 0; s < successors.Count; s++)
         {
             arrivals[s] = new Arrival(keys.Of(key, successors, s), s);
-            happens[keys.PositionOf(successors.Transition(s))] = true;
+            happened[successors.Transition(s)] = true;
         }
 
         Sort(arrivals.AsSpan(0, successors.Count));

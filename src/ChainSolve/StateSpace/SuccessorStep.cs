@@ -2,10 +2,11 @@ using ChainSolve.Expressions;
 
 namespace ChainSolve.StateSpace;
 
-/// <summary>What a transition does to a key.</summary>
+/// <summary>What a transition does to a key, or one outcome of it.</summary>
 /// <param name="Shift">What it adds, modulo the size of a key.</param>
 /// <param name="Needs">Where the variables have to be for it to be possible; null where what it does has to be worked out for each state.</param>
-internal readonly record struct SuccessorStep(UInt128 Shift, VariableRange[]? Needs)
+/// <param name="IsDrawn">Whether it is one of several outcomes, among which the rate is shared out.</param>
+internal readonly record struct SuccessorStep(UInt128 Shift, VariableRange[]? Needs, bool IsDrawn)
 {
     /// <summary>Whether it leads back to the same state.</summary>
     public bool IsStill => Shift == 0;

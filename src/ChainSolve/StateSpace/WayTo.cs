@@ -7,10 +7,12 @@ namespace ChainSolve.StateSpace;
 internal sealed class WayTo<TKey>(SuccessorKeys<TKey> keys, SuccessorFinder finder)
     where TKey : unmanaged, IBinaryInteger<TKey>
 {
+    private const int StatesBetweenLooks = 4096;
+
     private readonly BoundModel model = keys.Plans.Model;
 
     /// <summary>The labels of the transitions on the way; empty for a state of the start.</summary>
-    public IReadOnlyList<string> Find(IReadOnlyList<(int[] Marking, double Probability)> starts, TKey target)
+    public IReadOnlyList<string> Find(IReadOnlyList<(int[] Marking, double Probability)> starts, TKey target, CancellationToken cancellation)
     {
         var table = new KeyTable<TKey>();
         var from = new List<(int State, int Transition)>();
@@ -25,6 +27,11 @@ internal sealed class WayTo<TKey>(SuccessorKeys<TKey> keys, SuccessorFinder find
         var current = new int[model.Variables.Count];
         for (var state = 0; state < table.Count; state++)
         {
+            if (state % StatesBetweenLooks == 0)
+            {
+                cancellation.ThrowIfCancellationRequested();
+            }
+
             if (table[state] == target)
             {
                 return WayBack(from, state);

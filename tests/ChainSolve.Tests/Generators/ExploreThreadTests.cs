@@ -13,9 +13,11 @@ public class ExploreThreadTests
     // Some 30,000 states: shifts of the key, two moves that lead the same way, counters that step, a draw, a loop, and effects to be worked out.
     private const string Plant =
         """
+        given part = 0.3
+        given none = 0
         crew fitter = 2
         item pump x 24 { up -> down at 1; up -> down at 0.1 named wear; down -> up at 2 by fitter; up -> up at 3 }
-        item fan x 20 { up -> down at 1 when stock > 0 { stock = stock - 1 }; down -> lost 0.25, up 0.75 at 2 by fitter; lost -> up at 1 }
+        item fan x 20 { up -> down at 1 when stock > 0 { stock = stock - 1 }; down -> lost part, up 1 - part - none, down none at 2 by fitter; down -> up 0.2, lost 0.8 at 0.1; lost -> up at 1 }
         counter stock 0 .. 5 start 5
         event order at 0.5 when stock < 5 { stock = stock + 1 }
         event storm at 0.01 { pump: up -> down x 2 if any }
@@ -54,9 +56,9 @@ public class ExploreThreadTests
     {
         var model = Bound.Model("given wear = 0.1\n" + Plant.Replace("at 0.1 named", "at wear named", StringComparison.Ordinal));
         var first = ChainBuilder.Build(model, ExploredText.Defaults(model), new ExploreOptions(), SolveContext.Default);
-        foreach (var (value, isRefilled) in new[] { (0.3, true), (0.0, true) })
+        foreach (var (wear, part, isRefilled) in new[] { (0.3, 0.3, true), (0.0, 0.7, true), (0.1, 0, true), (0.1, 1, true) })
         {
-            var givens = new Modelling.GivenValues([value]);
+            var givens = new Modelling.GivenValues([wear, part, 0]);
             var rebuilt = ChainBuilder.Rebuild(first, givens, new ExploreOptions(), new SolveContext { Threads = 2 });
             Assert.Equal(isRefilled, rebuilt.IsRefilled);
             AreSame(ChainBuilder.Build(model, givens, new ExploreOptions(), SolveContext.Default), rebuilt);
@@ -68,6 +70,7 @@ public class ExploreThreadTests
     [InlineData("event end at a + b - 200 when a + b >= 150 { a = a - 1 }")]
     [InlineData("event end at 1 when a + b = 200 { b = b + 200 }")]
     [InlineData("event end at 1e308 * max(0, a - 150) { }")]
+    [InlineData("item u x 3 { v -> w a/100, z 1 - a/100 at max(0, a - 150) }")]
     [InlineData("item u x 2 { states v, w }\nevent end at max(0, a - 150) { u: v -> w x 3 }")]
     public void Build_ManyFaults_TellsTheSameForAnyThreads(string fault)
     {

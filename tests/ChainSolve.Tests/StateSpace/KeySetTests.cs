@@ -21,7 +21,7 @@ public class KeySetTests
     {
         var random = new Random(seed);
         var shards = random.Next(1, 4);
-        NumbersThemInOrder(random, new KeyBlocks<ulong>(shards), Keys(random, random.Next(0, 65), random.Next(60)).Select(k => (ulong)k));
+        NumbersThemInOrder(random, new KeyBlocks<ulong>(shards, default), Keys(random, random.Next(0, 65), random.Next(60)).Select(k => (ulong)k));
     }
 
     [Property(MaxTest = 100)]
@@ -29,13 +29,13 @@ public class KeySetTests
     {
         var random = new Random(seed);
         var shards = random.Next(1, 4);
-        NumbersThemInOrder(random, new KeyBlocks<UInt128>(shards), Keys(random, random.Next(0, 129), random.Next(120)));
+        NumbersThemInOrder(random, new KeyBlocks<UInt128>(shards, default), Keys(random, random.Next(0, 129), random.Next(120)));
     }
 
     [Fact]
     public void Blocks_KeysAtTheEnds_AreKept()
     {
-        var set = new KeyBlocks<UInt128>(1);
+        var set = new KeyBlocks<UInt128>(1, default);
         var added = new UInt128[4];
         Assert.Equal(3, set.Add(0, [UInt128.MaxValue, 0, UInt128.MaxValue, ulong.MaxValue], added));
         set.Close(CancellationToken.None);
