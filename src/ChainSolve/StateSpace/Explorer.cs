@@ -49,11 +49,13 @@ internal sealed class Explorer<TKey>
     public static StateTable Explore(
         SuccessorKeys<TKey> keys, GivenValues givens, IReadOnlyList<(int[] Marking, double Probability)> starts, long maxStates, SolveContext context)
     {
-        if (context.Threads > 1)
+        // Where a compiled method does all and a map of bits takes the states, sending them costs more than finding them.
+        var threads = keys.IsCompiled && KeySets.IsShort(keys.Plans.Layout) ? 1 : Math.Min(context.Threads, MostThreads);
+        if (threads > 1)
         {
             try
             {
-                return new Explorer<TKey>(keys, givens, maxStates, Math.Min(context.Threads, MostThreads), context).Explore(starts);
+                return new Explorer<TKey>(keys, givens, maxStates, threads, context).Explore(starts);
             }
             catch (LimitExceededException)
             {

@@ -33,6 +33,9 @@ internal sealed class SuccessorKeys<TKey>
     /// <summary>What can come of each transition, in the order of <see cref="Program"/>.</summary>
     public (int Transition, int Target)[] Outcomes { get; }
 
+    /// <summary>Whether the program does all states in which nothing is at fault.</summary>
+    public bool IsCompiled => IsForCompiling && Plans.Effects.All(e => e.Needs is not null);
+
     /// <summary>One method for the successors of most states; null where none is to be compiled. Compiled on first use.</summary>
     public SuccessorProgram<TKey>? Program => program.Value;
 
@@ -43,6 +46,8 @@ internal sealed class SuccessorKeys<TKey>
     public TKey Of(TKey from, SuccessorList successors, int successor) => successors.IsShift(successor)
         ? unchecked(from + shifts[successors.Transition(successor)])
         : Codec.Pack(successors.Marking(successor));
+
+    private bool IsForCompiling => Plans.BackEnd != ExprBackEnd.Interpreted && RuntimeFeature.IsDynamicCodeCompiled;
 
     private static int Compare(((int Transition, int Target) Outcome, SuccessorStep Step) one, ((int Transition, int Target) Outcome, SuccessorStep Step) other)
     {
@@ -68,7 +73,7 @@ internal sealed class SuccessorKeys<TKey>
 
     private SuccessorProgram<TKey>? Compile(SuccessorStep[] steps)
     {
-        if (Plans.BackEnd == ExprBackEnd.Interpreted || !RuntimeFeature.IsDynamicCodeCompiled || steps.All(s => s.Needs is null))
+        if (!IsForCompiling || steps.All(s => s.Needs is null))
         {
             return null;
         }
