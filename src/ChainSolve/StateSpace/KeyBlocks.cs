@@ -14,6 +14,9 @@ internal sealed class KeyBlocks<TKey> : KeySet<TKey>
     // The slots of so many keys are touched before any of them is looked at, so that memory is waited for once and not for each.
     private const int KeysAtOnce = 128;
 
+    // Four blocks fill a line of a cache.
+    private const int NeighbourBits = 2;
+
     // A wide key is aligned to its size, so that its block takes twice that too.
     private static readonly long KeyBytes = typeof(TKey) == typeof(ulong) ? 8 : 16;
 
@@ -135,7 +138,7 @@ internal sealed class KeyBlocks<TKey> : KeySet<TKey>
         /// <summary>Asks memory for where a key is looked for first, without waiting for it.</summary>
         public void Touch(TKey key)
         {
-            var slot = (int)(KeyHash.Of(key >> 6) >> shift);
+            var slot = HomeOf(key >> 6);
             touched ^= blocks[slot].Word;
             if (before.Length > 0)
             {
@@ -218,9 +221,13 @@ internal sealed class KeyBlocks<TKey> : KeySet<TKey>
             blocks = grown;
         }
 
+        // Neighbours stand side by side, so that what is read for one of them serves the others.
+        private int HomeOf(TKey block) =>
+            ((int)(KeyHash.Of(block >> NeighbourBits) >> shift) & -(1 << NeighbourBits)) | ((int)uint.CreateTruncating(block) & ((1 << NeighbourBits) - 1));
+
         private int SlotOf(Block[] table, TKey block)
         {
-            var slot = (int)(KeyHash.Of(block) >> shift);
+            var slot = HomeOf(block);
             while (table[slot].Word != 0 && table[slot].Number != block)
             {
                 slot = (slot + 1) & (table.Length - 1);
