@@ -3,7 +3,7 @@ using System.Numerics;
 namespace ChainSolve.StateSpace;
 
 /// <summary>
-/// Keys of any width in blocks of 64 neighbours: a hash from the upper bits to a word with a bit for each key. Costs 36 to 72 bytes a block, so
+/// Keys of any width in blocks of 64 neighbours: a hash from the upper bits to a word with a bit for each key. Costs 45 to 80 bytes a block, so
 /// the fewer for each key, the denser they stand.
 /// </summary>
 internal sealed class KeyBlocks<TKey> : KeySet<TKey>
