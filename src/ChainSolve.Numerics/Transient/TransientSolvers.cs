@@ -1,4 +1,5 @@
 using ChainSolve.Numerics.Iteration;
+using ChainSolve.Numerics.Krylov;
 
 namespace ChainSolve.Numerics.Transient;
 
@@ -11,8 +12,11 @@ public static class TransientSolvers
     private const double CheapSquaring = 2e7;
     private const double AffordableSquaring = 8e9;
 
+    // Some minutes for a proof; beyond, an estimate is better than none.
+    private const double PatientWork = 2e12;
+
     /// <summary>The methods of this library.</summary>
-    public static IReadOnlyList<ITransientSolver> All { get; } = [new SquaringSolver(), new UniformizationSolver()];
+    public static IReadOnlyList<ITransientSolver> All { get; } = [new SquaringSolver(), new UniformizationSolver(), new KrylovSolver()];
 
     /// <summary>Chooses a method.</summary>
     /// <param name="problem">What is asked.</param>
@@ -59,28 +63,33 @@ public static class TransientSolvers
     }
 
     /// <summary>
-    /// By cost, but for the two methods of this library: squaring is right to one rounding, and goes first where it is cheap; where it is
-    /// not, uniformization is tried before it, as long as it promises to take less work, since many chains settle long before the last time.
+    /// By cost, but for the methods of this library. Squaring is right to one rounding, and goes first where it is cheap. Where it is not, uniformization
+    /// is tried before it as long as it promises to take less work, since many chains settle long before the last time. Subspaces give no proof, and come last.
     /// </summary>
     private static IEnumerable<ITransientSolver> InOrder(List<(ITransientSolver Solver, double Cost)> costs, TransientProblem problem)
     {
-        var squaring = costs.Find(c => c.Solver is SquaringSolver);
-        var walk = costs.Find(c => c.Solver is UniformizationSolver);
-        if (squaring.Solver is null || walk.Solver is null)
+        (ITransientSolver? Solver, double Cost) Own<TSolver>() =>
+            costs.Find(c => c.Solver is TSolver) is { Solver: not null } found ? found : (null, double.PositiveInfinity);
+        var (squaring, walk, subspaces) = (Own<SquaringSolver>(), Own<UniformizationSolver>(), Own<KrylovSolver>());
+        var most = Math.Min(squaring.Cost, subspaces.Solver is null ? double.PositiveInfinity : PatientWork);
+        if (walk.Cost > most)
         {
-            return costs.Select(c => c.Solver);
+            walk.Solver = new UniformizationSolver { MostWork = most };
         }
 
-        var isRough = walk.Cost > squaring.Cost || !UniformizationSolver.IsWide(problem);
-        var isFirst = squaring.Cost <= (isRough ? AffordableSquaring : CheapSquaring);
-        ITransientSolver patient = walk.Cost > squaring.Cost ? new UniformizationSolver { MostWork = squaring.Cost } : walk.Solver;
-        var pair = new Queue<ITransientSolver>(isFirst ? [squaring.Solver, walk.Solver] : [patient, squaring.Solver]);
-        return [.. costs.Select(c => c.Solver is SquaringSolver or UniformizationSolver ? pair.Dequeue() : c.Solver)];
+        var isRough = walk.Cost > squaring.Cost || (walk.Solver is not null && !UniformizationSolver.IsWide(problem));
+        ITransientSolver?[] order = squaring.Cost <= (isRough ? AffordableSquaring : CheapSquaring)
+            ? [squaring.Solver, walk.Solver, subspaces.Solver]
+            : squaring.Cost <= PatientWork ? [walk.Solver, squaring.Solver, subspaces.Solver]
+            : [walk.Solver, subspaces.Solver, squaring.Solver];
+        var own = new Queue<ITransientSolver>(order.OfType<ITransientSolver>());
+        return [.. costs.Select(c => c.Solver is SquaringSolver or UniformizationSolver or KrylovSolver ? own.Dequeue() : c.Solver)];
     }
 
     private static string Reason(ITransientSolver solver) => solver switch
     {
         SquaringSolver => "the chain is small: squaring its matrix is right to one rounding at any time",
+        KrylovSolver => "the chain is large and stiff, and subspaces take the least work",
         UniformizationSolver => "uniformization takes the least work for this size and these times",
         _ => "it takes the least work by its own account",
     };

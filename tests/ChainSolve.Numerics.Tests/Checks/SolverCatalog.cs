@@ -1,4 +1,5 @@
 using ChainSolve.Numerics.Absorption;
+using ChainSolve.Numerics.Krylov;
 using ChainSolve.Numerics.Stationary;
 using ChainSolve.Numerics.Transient;
 
@@ -7,7 +8,8 @@ namespace ChainSolve.Numerics.Tests.Checks;
 /// <summary>All solvers under test, by name.</summary>
 internal static class SolverCatalog
 {
-    public static IReadOnlyList<ITransientSolver> Transient => TransientSolvers.All;
+    /// <summary>Those that are right digit by digit; subspaces are not, and have tests of their own.</summary>
+    public static IReadOnlyList<ITransientSolver> Transient => [.. TransientSolvers.All.Where(s => s is not KrylovSolver)];
 
     public static IReadOnlyList<IStationarySolver> Stationary => StationarySolvers.All;
 

@@ -1,3 +1,4 @@
+using ChainSolve.Numerics.Tests.Checks;
 using ChainSolve.Numerics.Estimates;
 using ChainSolve.Numerics.Iteration;
 using ChainSolve.Numerics.Kernels;
@@ -10,7 +11,7 @@ namespace ChainSolve.Numerics.Tests.Transient;
 
 public class TransientSolverTests
 {
-    public static TheoryData<string> Methods => [.. TransientSolvers.All.Select(s => s.Name)];
+    public static TheoryData<string> Methods => [.. SolverCatalog.Transient.Select(s => s.Name)];
 
     [Theory]
     [MemberData(nameof(Methods))]
@@ -271,9 +272,26 @@ public class TransientSolverTests
         Assert.Equal("uniformization", TransientSolvers.Select(Problem(grid, 3)).Solver.Name);
         Assert.Contains("least work", TransientSolvers.Select(Problem(grid, 3)).Why, StringComparison.Ordinal);
         Assert.Equal("asked for by name", TransientSolvers.Select(Problem(grid, 3), "squaring").Why);
-        Assert.Contains("squaring, uniformization", Assert.Throws<ArgumentException>(
+        Assert.Contains("squaring, uniformization, krylov", Assert.Throws<ArgumentException>(
             () => TransientSolvers.Select(Problem(grid, 3), "guessing")).Message, StringComparison.Ordinal);
         Assert.Equal("uniformization", TransientSolvers.Select(Problem(Chains.Lattice([100, 100], (_, _) => 1, (_, _) => 1), 1e12)).Solver.Name);
+    }
+
+    /// <summary>The order in which methods are tried, by size and by the number of events of the fastest state.</summary>
+    [Theory]
+    [InlineData(10, 1e2, "squaring uniformization krylov")]
+    [InlineData(10, 1e16, "squaring uniformization krylov")]
+    [InlineData(300, 10, "uniformization squaring krylov")]
+    [InlineData(300, 1e4, "uniformization squaring krylov")]
+    [InlineData(300, 1e9, "uniformization squaring krylov")]
+    [InlineData(2500, 1e9, "uniformization krylov squaring")]
+    [InlineData(40_000, 1e2, "uniformization krylov")]
+    [InlineData(40_000, 1e7, "uniformization krylov")]
+    public void Rank_BySizeAndEvents_TriesProofsFirst(int states, double events, string order)
+    {
+        var chain = Chains.Lattice([states / 10, 10], (_, _) => 1, (_, _) => 1);
+        var problem = new TransientProblem { Generator = chain, Start = Chains.StartAt(chain.StateCount, 0), Times = [events / chain.MaxExitRate], Rates = [new double[chain.StateCount]] };
+        Assert.Equal(order, string.Join(' ', TransientSolvers.Rank(problem, null, null).Select(c => c.Solver.Name)));
     }
 
     [Fact]
