@@ -45,6 +45,7 @@ public static class AbsorptionSolvers
             return [new(small, "few states count: elimination without subtractions has a proved bound")];
         }
 
+        var hasMultilevel = solvers.OfType<RestartAbsorptionSolver>().Any(s => s.IsMultilevel);
         var ranked = new List<(double Cost, Choice<IAbsorptionSolver> Choice)>();
         foreach (var solver in solvers)
         {
@@ -61,7 +62,8 @@ public static class AbsorptionSolvers
                 SparseGthAbsorptionSolver => (0.0, "its elimination stays sparse enough, and the bound is proved"),
                 _ => (AffordableElimination, "too many states count for an elimination"),
             };
-            ranked.Add((cost + delay, new(solver, why)));
+            var taken = hasMultilevel && solver is RestartAbsorptionSolver restarted ? restarted.LeftEarly() : solver;
+            ranked.Add((cost + delay, new(taken, why)));
         }
 
         return ranked.Count == 0

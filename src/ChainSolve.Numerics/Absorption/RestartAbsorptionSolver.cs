@@ -1,5 +1,6 @@
 using ChainSolve.Numerics.Arithmetic;
 using ChainSolve.Numerics.Iteration;
+using ChainSolve.Numerics.Multilevel;
 using ChainSolve.Numerics.Operators;
 using ChainSolve.Numerics.Stationary;
 using ChainSolve.Numerics.Structure;
@@ -19,6 +20,13 @@ namespace ChainSolve.Numerics.Absorption;
 internal sealed class RestartAbsorptionSolver(IStationarySolver iteration, double costPerEntry) : IAbsorptionSolver
 {
     public string Name => iteration.Name;
+
+    /// <summary>Whether the weights come from aggregation.</summary>
+    public bool IsMultilevel => iteration is MultilevelSolver;
+
+    /// <summary>The same, but sweeps that turn out slow are left early.</summary>
+    public RestartAbsorptionSolver LeftEarly() =>
+        iteration is SweepSolver sweeps ? new RestartAbsorptionSolver(sweeps.LeftEarly(), costPerEntry) : this;
 
     public double Cost(AbsorptionProblem problem) =>
         costPerEntry * (problem.Generator.TransitionCount + problem.Generator.StateCount) * (1 + problem.Starts.Count + problem.Rewards.Count);

@@ -47,6 +47,7 @@ public static class StationarySolvers
             return [new(balanced, "the chain is reversible: balance pair by pair has a proved bound")];
         }
 
+        var hasMultilevel = solvers.OfType<MultilevelSolver>().Any();
         var ranked = new List<(double Cost, Choice<IStationarySolver> Choice)>();
         foreach (var solver in solvers)
         {
@@ -63,7 +64,8 @@ public static class StationarySolvers
                 SparseGthSolver => (0.0, "its elimination stays sparse enough, and the bound is proved"),
                 _ => (AffordableElimination, "the chain is too large for an elimination"),
             };
-            ranked.Add((cost + delay, new(solver, why)));
+            var taken = hasMultilevel && solver is SweepSolver sweeps ? sweeps.LeftEarly() : solver;
+            ranked.Add((cost + delay, new(taken, why)));
         }
 
         return ranked.Count == 0

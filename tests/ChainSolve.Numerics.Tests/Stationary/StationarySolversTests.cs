@@ -1,4 +1,5 @@
 using ChainSolve.Numerics.Iteration;
+using ChainSolve.Numerics.Multilevel;
 using ChainSolve.Numerics.Operators;
 using ChainSolve.Numerics.Stationary;
 using ChainSolve.Numerics.Tests.Support;
@@ -101,6 +102,21 @@ public class StationarySolversTests
         Assert.Equal("detailed-balance", StationarySolvers.Select(Chains.Lattice([40, 40, 40], (_, _) => 1, (_, _) => 2)).Solver.Name);
         Assert.Contains("reversible", StationarySolvers.Select(Chains.Lattice([10, 10], (_, _) => 1, (_, _) => 2)).Why, StringComparison.Ordinal);
         Assert.Equal("asked for by name", StationarySolvers.Select(Random(30, 2, 3), "sparse-gth").Why);
+    }
+
+    [Fact]
+    public void Rank_WithoutEliminations_LeavesSlowSweepsForCyclesOfAggregation()
+    {
+        // A queue under heavy load: sweeps need tens of thousands of cycles.
+        var queue = Chains.Lattice([300, 2], (a, _) => a == 0 ? 0.99 : 0.01, (a, l) => a == 0 && l > 150 ? 1.01 : 1);
+        var ranked = StationarySolvers.Rank(queue, null, [.. StationarySolvers.All.Where(s => s is SweepSolver or MultilevelSolver)]);
+        var (vector, choice) = Attempts.First(ranked, s => s.Solve(queue, SolveContext.Default), s => s.Name);
+        var expected = new GthSolver().Solve(queue, SolveContext.Default);
+
+        Assert.Equal(["gauss-seidel", "multilevel", "sor"], ranked.Select(r => r.Solver.Name));
+        Assert.Equal("multilevel", choice.Solver.Name);
+        Assert.Contains("slower than other methods", choice.Why, StringComparison.Ordinal);
+        Assert.InRange(Chains.Distance(vector.Probabilities[0], expected.Probabilities[0]), 0, vector.RelativeBound + expected.RelativeBound);
     }
 
     [Theory]
