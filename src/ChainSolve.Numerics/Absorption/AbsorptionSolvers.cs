@@ -1,3 +1,4 @@
+using ChainSolve.Numerics.Balance;
 using ChainSolve.Numerics.Iteration;
 using ChainSolve.Numerics.Multilevel;
 using ChainSolve.Numerics.Stationary;
@@ -17,6 +18,8 @@ public static class AbsorptionSolvers
         new SparseGthAbsorptionSolver(),
         new RestartAbsorptionSolver(new SweepSolver("gauss-seidel", false), 1000),
         new RestartAbsorptionSolver(new MultilevelSolver(), 2000),
+        new RestartAbsorptionSolver(BalanceSolver.BiConjugate, 5000),
+        new RestartAbsorptionSolver(BalanceSolver.MinimalResidual, 5000),
     ];
 
     /// <summary>Chooses a method.</summary>

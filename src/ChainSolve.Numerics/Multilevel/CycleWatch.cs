@@ -24,13 +24,18 @@ internal sealed class CycleWatch
 
     private readonly double[] reference;
     private readonly double rounding;
-    private readonly Recombination recombination = new();
+    private readonly bool combines;
+    private readonly Recombination? recombination;
     private readonly Queue<double> ratios = new();
     private double lowest = double.PositiveInfinity;
     private int still;
 
-    public CycleWatch(Generator generator)
+    /// <param name="generator">The chain.</param>
+    /// <param name="combines">Whether results of cycles are combined with earlier ones.</param>
+    public CycleWatch(Generator generator, bool combines = true)
     {
+        this.combines = combines;
+        recombination = combines ? new Recombination() : null;
         reference = new double[generator.StateCount];
         rounding = Unit * (8 + (generator.TransitionCount / (double)generator.StateCount));
     }
@@ -45,15 +50,20 @@ internal sealed class CycleWatch
 
     public bool IsDone { get; private set; }
 
+    /// <summary>By how much the roundings of one cycle are magnified in its result; 1 where nothing is subtracted.</summary>
+    public double Amplification { get; set; } = 1;
+
     /// <summary>The relative error that is left, for the worst weight.</summary>
-    public double Error => Contraction >= 1 ? double.PositiveInfinity : 8 * ((Change * Contraction) + rounding) / (1 - Contraction);
+    public double Error => Contraction >= 1
+        ? double.PositiveInfinity
+        : 8 * ((Change * (combines ? Contraction : 1)) + (rounding * Amplification)) / (1 - Contraction);
 
     /// <summary>Runs a cycle, looks at its change, and combines the result with earlier ones.</summary>
     public void Step(FlowLevel finest, Action cycle)
     {
         if (Change >= Calm)
         {
-            recombination.Restart();
+            recombination?.Restart();
         }
 
         finest.Weights.CopyTo(reference, 0);
@@ -67,7 +77,7 @@ internal sealed class CycleWatch
         IsDone = next <= rounding || (next < Rough && still >= Standstill);
         if (!IsDone && next < Calm)
         {
-            recombination.Improve(reference, finest.Weights);
+            recombination?.Improve(reference, finest.Weights);
         }
     }
 

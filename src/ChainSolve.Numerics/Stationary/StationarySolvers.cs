@@ -1,3 +1,4 @@
+using ChainSolve.Numerics.Balance;
 using ChainSolve.Numerics.Iteration;
 using ChainSolve.Numerics.Multilevel;
 using ChainSolve.Numerics.Operators;
@@ -13,7 +14,16 @@ public static class StationarySolvers
 
     /// <summary>The methods of this library.</summary>
     public static IReadOnlyList<IStationarySolver> All { get; } =
-        [new GthSolver(), new SparseGthSolver(), new DetailedBalanceSolver(), new SweepSolver("gauss-seidel", false), new SweepSolver("sor", true), new MultilevelSolver()];
+    [
+        new GthSolver(),
+        new SparseGthSolver(),
+        new DetailedBalanceSolver(),
+        new SweepSolver("gauss-seidel", false),
+        new SweepSolver("sor", true),
+        new MultilevelSolver(),
+        BalanceSolver.BiConjugate,
+        BalanceSolver.MinimalResidual,
+    ];
 
     /// <summary>Chooses a method for an irreducible chain.</summary>
     /// <param name="generator">The chain.</param>
