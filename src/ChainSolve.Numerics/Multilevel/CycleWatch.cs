@@ -19,6 +19,12 @@ internal sealed class CycleWatch
     // Changes as large as this are too wild to be combined.
     private const double Calm = 0.5;
     private const int ProbeCycles = 6;
+
+    // Balances that are off by more are not met.
+    private const double Unbalanced = 1e-12;
+
+    // A disturbance that has shrunk to this has faded in every direction.
+    private const double Faded = 1e-3;
     private const double Unit = 1.12e-16;
     private const int Standstill = 3;
 
@@ -50,13 +56,19 @@ internal sealed class CycleWatch
 
     public bool IsDone { get; private set; }
 
+    /// <summary>How far the balance of a state was off at the end, relative.</summary>
+    public double Imbalance { get; private set; }
+
+    /// <summary>Whether the last cycle stood still where the balances do not hold.</summary>
+    public bool IsUndone { get; private set; }
+
     /// <summary>By how much the roundings of one cycle are magnified in its result; 1 where nothing is subtracted.</summary>
     public double Amplification { get; set; } = 1;
 
     /// <summary>The relative error that is left, for the worst weight.</summary>
     public double Error => Contraction >= 1
         ? double.PositiveInfinity
-        : 8 * ((Change * (combines ? Contraction : 1)) + (rounding * Amplification)) / (1 - Contraction);
+        : 8 * ((Change * (combines ? Contraction : 1)) + Imbalance + (rounding * Amplification)) / (1 - Contraction);
 
     /// <summary>Runs a cycle, looks at its change, and combines the result with earlier ones.</summary>
     public void Step(FlowLevel finest, Action cycle)
@@ -75,6 +87,14 @@ internal sealed class CycleWatch
         still = next > 0.9 * lowest ? still + 1 : 0;
         (Change, lowest) = (next, Math.Min(lowest, next));
         IsDone = next <= rounding || (next < Rough && still >= Standstill);
+        if (IsDone)
+        {
+            // A cycle may stand still at wrong weights, where the sweeps and the corrections undo each other.
+            Imbalance = finest.Imbalance();
+            IsUndone = Imbalance > Unbalanced;
+            IsDone = !IsUndone;
+        }
+
         if (!IsDone && next < Calm)
         {
             recombination?.Improve(reference, finest.Weights);
@@ -100,9 +120,10 @@ internal sealed class CycleWatch
         }
 
         Cycles += c;
-        if (Contraction >= 1 && before < first)
+        if (Contraction >= 1 && before < Faded * first)
         {
-            // Errors that turn as they shrink have no steady speed; what they lost on the way is their speed.
+            // Errors that turn as they shrink have no steady speed; what they lost on the way is their speed. One that stands
+            // still after others have faded is another matter: it leaves the contraction at 1.
             ratios.Clear();
             ratios.Enqueue(Math.Pow(before / first, 1.0 / c));
         }

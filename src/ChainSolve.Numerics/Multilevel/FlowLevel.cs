@@ -44,6 +44,28 @@ internal sealed class FlowLevel
         }
     }
 
+    /// <summary>The largest relative difference between what comes into a state and what goes out of it.</summary>
+    public double Imbalance()
+    {
+        const double Negligible = 1e-280;
+        var worst = 0.0;
+        for (var j = 0; j < Count; j++)
+        {
+            var sum = 0.0;
+            for (var e = Inflows.Offsets[j]; e < Inflows.Offsets[j + 1]; e++)
+            {
+                sum += Inflows.Values[e] * Weights[Inflows.Targets[e]];
+            }
+
+            if (Weights[j] > Negligible)
+            {
+                worst = Math.Max(worst, Math.Abs((sum / Outflows[j] / Weights[j]) - 1));
+            }
+        }
+
+        return worst;
+    }
+
     /// <summary>Brings the largest weight near 1 by a power of two, which rounds nothing.</summary>
     public void Rescale()
     {

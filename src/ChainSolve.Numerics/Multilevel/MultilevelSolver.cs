@@ -45,7 +45,7 @@ internal sealed class MultilevelSolver : IStationarySolver
             watch.Step(finest, () => cycle.Run(cancellation));
             finest.Rescale();
             context.Progress?.Report(new SolveProgress(Name, watch.Cycles, 0, $"error about {watch.Error:G2}"));
-            var isSlow = watch.Cycles - grouped >= SlowCycles && watch.Contraction > Slow && !watch.IsDone;
+            var isSlow = !watch.IsDone && (watch.IsUndone || (watch.Cycles - grouped >= SlowCycles && watch.Contraction > Slow));
             if (watch.Cycles == FirstCycles || isSlow)
             {
                 smoothings = isSlow ? Math.Min(2 * smoothings, MaxSmoothings) : 1;

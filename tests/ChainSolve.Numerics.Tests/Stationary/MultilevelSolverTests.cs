@@ -142,6 +142,30 @@ public class MultilevelSolverTests
     }
 
     [Fact]
+    public void Solve_ARingOnWhichCyclesStandStillAtWrongWeights_IsRefusedOrWithinTheBound()
+    {
+        // Found by chance among random chains: sweeps and corrections undo each other, so that a change of zero proves nothing.
+        var chain = Chains.Of(
+            41,
+            (0, 1, 9e-05), (1, 28, 0.001), (2, 3, 2e-11), (3, 4, 1e-12), (4, 8, 2e-11), (5, 6, 5e-10),
+            (6, 7, 4e-10), (7, 8, 0.5), (8, 13, 0.007), (9, 10, 0.0001), (10, 11, 0.0003), (11, 5, 0.0001),
+            (12, 13, 3e-11), (13, 14, 2e-06), (14, 15, 1e-08), (15, 16, 1e-06), (16, 17, 0.0001), (17, 18, 2e-10),
+            (18, 0, 0.002), (19, 26, 3e-09), (20, 21, 1e-09), (21, 12, 5e-07), (22, 23, 4e-09), (23, 24, 0.2),
+            (24, 25, 8e-12), (25, 26, 3e-10), (26, 27, 1e-08), (26, 34, 5e-09), (26, 39, 0.0003), (27, 28, 8e-07),
+            (28, 29, 2e-05), (29, 2, 0.0008), (29, 30, 1e-08), (30, 31, 0.08), (31, 9, 1e-05), (31, 32, 4e-07),
+            (32, 20, 1e-08), (32, 33, 1e-05), (33, 37, 1e-09), (34, 35, 4e-09), (35, 36, 0.0002), (36, 19, 0.02),
+            (37, 38, 4e-08), (38, 22, 0.002), (39, 40, 2e-06), (40, 37, 0.005));
+        try
+        {
+            Agrees(chain, 1e-9);
+        }
+        catch (NotConvergedException refusal)
+        {
+            Assert.NotEmpty(refusal.Message);
+        }
+    }
+
+    [Fact]
     public void Solve_OneStateAndTwo_AreExact()
     {
         Assert.Equal([1.0], Solver.Solve(Chains.Of(1), SolveContext.Default).Probabilities);

@@ -1,8 +1,8 @@
-using ChainSolve.Numerics.Tests.Checks;
 using ChainSolve.Numerics.Estimates;
 using ChainSolve.Numerics.Iteration;
 using ChainSolve.Numerics.Kernels;
 using ChainSolve.Numerics.Operators;
+using ChainSolve.Numerics.Tests.Checks;
 using ChainSolve.Numerics.Tests.Support;
 using ChainSolve.Numerics.Transient;
 using ChainSolve.Tests.Shared.Reference;
