@@ -9,8 +9,8 @@ namespace ChainSolve.Numerics.Stationary;
 /// <remarks>Safe to share between threads.</remarks>
 public static class StationarySolvers
 {
-    // Within this many operations an elimination, whose bound is proved, is preferred to anything faster.
-    private const double AffordableElimination = 6e10;
+    // Within this many operations, about a second, an elimination, whose bound is proved, is preferred to anything faster.
+    private const double AffordableElimination = 3e9;
 
     /// <summary>The methods of this library.</summary>
     public static IReadOnlyList<IStationarySolver> All { get; } =

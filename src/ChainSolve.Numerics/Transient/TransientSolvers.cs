@@ -52,38 +52,51 @@ public static class TransientSolvers
             return [new(SolverNames.Find(solvers, s => s.Name, name, "transient"), "asked for by name")];
         }
 
-        var costs = solvers.Select(s => (Solver: s, Cost: s.Cost(problem))).Where(c => double.IsFinite(c.Cost)).OrderBy(c => c.Cost).ToList();
+        var costs = new List<Costed>();
+        foreach (var solver in solvers)
+        {
+            costs.Add(new Costed(solver, solver.Cost(problem)));
+        }
+
+        costs.RemoveAll(c => !double.IsFinite(c.Cost));
         if (costs.Count == 0)
         {
             throw new NotConvergedException(
                 $"None of the methods {string.Join(", ", solvers.Select(s => s.Name))} can do {problem.Generator.StateCount} states to these times.");
         }
 
-        return [.. InOrder(costs, problem).Select(s => new Choice<ITransientSolver>(s, Reason(s)))];
+        var ranked = new List<Choice<ITransientSolver>>();
+        foreach (var solver in InOrder([.. costs.OrderBy(c => c.Cost)], problem))
+        {
+            ranked.Add(new(solver, Reason(solver)));
+        }
+
+        return ranked;
     }
 
     /// <summary>
     /// By cost, but for the methods of this library. Squaring is right to one rounding, and goes first where it is cheap. Where it is not, uniformization
     /// is tried before it as long as it promises to take less work, since many chains settle long before the last time. Subspaces give no proof, and come last.
     /// </summary>
-    private static IEnumerable<ITransientSolver> InOrder(List<(ITransientSolver Solver, double Cost)> costs, TransientProblem problem)
+    private static IEnumerable<ITransientSolver> InOrder(IReadOnlyList<Costed> costs, TransientProblem problem)
     {
-        (ITransientSolver? Solver, double Cost) Own<TSolver>() =>
-            costs.Find(c => c.Solver is TSolver) is { Solver: not null } found ? found : (null, double.PositiveInfinity);
-        var (squaring, walk, subspaces) = (Own<SquaringSolver>(), Own<UniformizationSolver>(), Own<KrylovSolver>());
-        var most = Math.Min(squaring.Cost, subspaces.Solver is null ? double.PositiveInfinity : PatientWork);
-        if (walk.Cost > most)
+        var squaring = costs.FirstOrDefault(c => c.Solver is SquaringSolver);
+        var walk = costs.FirstOrDefault(c => c.Solver is UniformizationSolver);
+        var subspaces = costs.FirstOrDefault(c => c.Solver is KrylovSolver);
+        var squaringCost = squaring?.Cost ?? double.PositiveInfinity;
+        var most = Math.Min(squaringCost, subspaces is null ? double.PositiveInfinity : PatientWork);
+        var isRough = walk is not null && (walk.Cost > squaringCost || !UniformizationSolver.IsWide(problem));
+        if (walk?.Cost > most)
         {
-            walk.Solver = new UniformizationSolver { MostWork = most };
+            walk = walk with { Solver = new UniformizationSolver { MostWork = most } };
         }
 
-        var isRough = walk.Cost > squaring.Cost || (walk.Solver is not null && !UniformizationSolver.IsWide(problem));
-        ITransientSolver?[] order = squaring.Cost <= (isRough ? AffordableSquaring : CheapSquaring)
-            ? [squaring.Solver, walk.Solver, subspaces.Solver]
-            : squaring.Cost <= PatientWork ? [walk.Solver, squaring.Solver, subspaces.Solver]
-            : [walk.Solver, subspaces.Solver, squaring.Solver];
-        var own = new Queue<ITransientSolver>(order.OfType<ITransientSolver>());
-        return [.. costs.Select(c => c.Solver is SquaringSolver or UniformizationSolver or KrylovSolver ? own.Dequeue() : c.Solver)];
+        Costed?[] order = squaringCost <= (isRough ? AffordableSquaring : CheapSquaring)
+            ? [squaring, walk, subspaces]
+            : squaringCost <= PatientWork ? [walk, squaring, subspaces]
+            : [walk, subspaces, squaring];
+        var own = new Queue<Costed>(order.OfType<Costed>());
+        return costs.Select(c => c.Solver is SquaringSolver or UniformizationSolver or KrylovSolver ? own.Dequeue().Solver : c.Solver);
     }
 
     private static string Reason(ITransientSolver solver) => solver switch
@@ -93,4 +106,6 @@ public static class TransientSolvers
         UniformizationSolver => "uniformization takes the least work for this size and these times",
         _ => "it takes the least work by its own account",
     };
+
+    private sealed record Costed(ITransientSolver Solver, double Cost);
 }

@@ -140,7 +140,7 @@ public sealed class ModelCommandTests : IDisposable
     [InlineData("likely - --steady --count 0", "'--count 0' is not a whole number from 1 to 1000000")]
     [InlineData("solve - --method gth", "'--method gth' is not JOB=NAME, for example --method transient=uniformization")]
     [InlineData("solve - --method steady=gth", "'--method' does not know 'steady'; known: transient, stationary, absorption")]
-    [InlineData("solve - --method transient=squarin", "'--method transient=' does not know 'squarin'; known: squaring, uniformization; nearest: 'squaring'")]
+    [InlineData("solve - --method transient=squarin", "'--method transient=' does not know 'squarin'; known: squaring, uniformization, krylov; nearest: 'squaring'")]
     [InlineData("solve - --method transient=squaring --method transient=uniformization", "'--method transient=' is given twice")]
     [InlineData("solve - --tolerance 2", "'--tolerance 2' is not a number above 0 and below 1, for example --tolerance 1e-9")]
     [InlineData("solve - --set mttr", "'--set mttr' is not NAME=VALUE, for example --set mttr=\"4 h\"")]
