@@ -91,7 +91,7 @@ public sealed partial class Model
 
     private static Func<Chain?, GivenValues, SolveOptions, CancellationToken, Chain> Build(BoundModel model) => (last, givens, options, cancellation) =>
     {
-        var explore = new ExploreOptions { MaxStates = options.MaxStates };
+        var explore = new ExploreOptions { MaxStates = options.MaxStates, MaxMemory = options.MaxMemory ?? long.MaxValue };
         var context = options.Context(cancellation);
         return last is ExploredChain explored
             ? ChainBuilder.Rebuild(explored, givens, explore, context)

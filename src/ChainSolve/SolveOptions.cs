@@ -38,6 +38,12 @@ public sealed record SolveOptions
     /// <summary>The most states that are explored, at least 1; beyond it <see cref="LimitExceededException"/>.</summary>
     public long MaxStates { get; init; } = 20_000_000;
 
+    /// <summary>
+    /// About how many bytes the chain may take, above 0; beyond it <see cref="LimitExceededException"/>, as soon as it can be told: while states are explored, and before transitions
+    /// are stored. Null for no limit. What solvers take besides is of the same order.
+    /// </summary>
+    public long? MaxMemory { get; init; }
+
     /// <summary>How long the call may take; beyond it <see cref="LimitExceededException"/>. Null for no limit.</summary>
     public TimeSpan? TimeLimit { get; init; }
 
@@ -80,6 +86,7 @@ public sealed record SolveOptions
         }
 
         ArgumentOutOfRangeException.ThrowIfLessThan(MaxStates, 1, nameof(MaxStates));
+        ArgumentOutOfRangeException.ThrowIfLessThan(MaxMemory ?? 1, 1, nameof(MaxMemory));
         ArgumentOutOfRangeException.ThrowIfLessThan(Threads, 1, nameof(Threads));
         if (TimeLimit is { } limit && (limit <= TimeSpan.Zero || limit.TotalMilliseconds > int.MaxValue))
         {

@@ -55,6 +55,9 @@ internal static class CommandRunner
             case LimitExceededException:
                 error.WriteLine($"chainsolve: {exception.Message}");
                 return ExitCodes.LimitHit;
+            case OutOfMemoryException or AggregateException { InnerExceptions: [OutOfMemoryException, ..] }:
+                error.WriteLine("chainsolve: memory ran out; raise --max-memory, ask for fewer measures, or write alike things as one item with 'x N'");
+                return ExitCodes.LimitHit;
             case NotConvergedException:
                 error.WriteLine($"chainsolve: {exception.Message}");
                 return ExitCodes.AccuracyNotReached;

@@ -13,6 +13,7 @@ internal sealed class CommonOptions
     private readonly Option<string[]> method = Repeatable("--method", "JOB=NAME", "Prescribes a method: transient=NAME, stationary=NAME or absorption=NAME.");
     private readonly Option<string> threads = Single("--threads", "N", "How many threads may work; as many as there are processors if not given. Results do not depend on it.");
     private readonly Option<string> maxStates = Single("--max-states", "N", "Gives up beyond this many states.");
+    private readonly Option<string> maxMemory = Single("--max-memory", "SIZE", "Gives up beyond this much memory, for example 500MB or \"4 GB\"; nine tenths of what there is if not given.");
     private readonly Option<string> timeLimit = Single("--time-limit", "TIME", "Gives up after this time, for example 30s or \"5 min\".");
     private readonly Option<string> format;
     private readonly Option<string> output = Single("--out", "PATH", "Writes the answer to a file, whole or not at all.");
@@ -36,7 +37,7 @@ internal sealed class CommonOptions
         foreach (var option in new Option[]
         {
             options.set, options.tolerance, options.negligible, options.method, options.threads, options.maxStates,
-            options.timeLimit, options.format, options.output, options.quiet, options.color,
+            options.maxMemory, options.timeLimit, options.format, options.output, options.quiet, options.color,
         })
         {
             command.Add(option);
@@ -64,6 +65,7 @@ internal sealed class CommonOptions
         Methods = ValueReader.Methods(parsed.GetValue(method) ?? []),
         Threads = parsed.GetValue(threads) is { } w ? (int)ValueReader.Whole("--threads", w, 1, 1024) : null,
         MaxStates = parsed.GetValue(maxStates) is { } m ? ValueReader.Whole("--max-states", m, 1, int.MaxValue) : null,
+        MaxMemory = parsed.GetValue(maxMemory) is { } size ? ValueReader.Memory("--max-memory", size) : null,
         TimeLimit = parsed.GetValue(timeLimit) is { } limit ? ValueReader.Duration("--time-limit", limit) : null,
         TimeLimitText = parsed.GetValue(timeLimit),
         Format = parsed.GetValue(format) is { } f ? ValueReader.OneOf("--format", f, formats) : formats[0],

@@ -11,6 +11,11 @@ internal sealed class ModelCommand(ProcessStreams streams, Func<byte[], Request,
     /// <returns>The exit code.</returns>
     public async Task<int> RunAsync(Request request, Func<IModelSession, Work, CommandAnswer> command, CancellationToken stop)
     {
+        if (request.MaxMemory is { } most)
+        {
+            streams.HoldMemory(most);
+        }
+
         var printer = new FaultPrinter(streams.Error, ColorChoice.Uses(request.Color, streams));
         var sink = new AnswerSink(streams, request.Output);
         sink.Check();

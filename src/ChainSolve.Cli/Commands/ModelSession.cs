@@ -1,3 +1,4 @@
+using ChainSolve.Cli.Terminal;
 using ChainSolve.Language.Diagnostics;
 using ChainSolve.Numerics.Estimates;
 using ChainSolve.Reports;
@@ -99,6 +100,7 @@ internal sealed class ModelSession : IModelSession
             StationaryMethod = request.Methods.GetValueOrDefault("stationary"),
             AbsorptionMethod = request.Methods.GetValueOrDefault("absorption"),
             MaxStates = request.MaxStates ?? usual.MaxStates,
+            MaxMemory = request.MaxMemory ?? MemoryLimit.OfThisMachine,
             Threads = request.Threads ?? Environment.ProcessorCount,
             Progress = work.Progress,
         };

@@ -20,6 +20,9 @@ internal sealed record Request
 
     public required long? MaxStates { get; init; }
 
+    /// <summary>In bytes.</summary>
+    public required long? MaxMemory { get; init; }
+
     public required TimeSpan? TimeLimit { get; init; }
 
     /// <summary>The time limit as it was written.</summary>

@@ -15,6 +15,11 @@ internal static class ValueReader
         ("absorption", [.. AbsorptionSolvers.All.Select(s => s.Name)]),
     ];
 
+    // Less than this the tool itself hardly fits in.
+    private const double LeastMemory = 200e6;
+
+    private static readonly (string Unit, double Bytes)[] MemoryUnits = [("MB", 1e6), ("GB", 1e9), ("TB", 1e12)];
+
     public static Setting Setting(string text)
     {
         var at = text.IndexOf('=', StringComparison.Ordinal);
@@ -69,6 +74,17 @@ internal static class ValueReader
         }
 
         throw new UsageException(FormattableString.Invariant($"'{option} {text}' is not a whole number from {low} to {high}"));
+    }
+
+    /// <summary>A size in bytes.</summary>
+    public static long Memory(string option, string text)
+    {
+        var trimmed = text.Trim();
+        var unit = MemoryUnits.FirstOrDefault(u => trimmed.EndsWith(u.Unit, StringComparison.Ordinal));
+        var number = unit.Unit is null ? "" : trimmed[..^unit.Unit.Length].TrimEnd();
+        return double.TryParse(number, NumberStyles.AllowDecimalPoint, CultureInfo.InvariantCulture, out var value) && value * unit.Bytes is >= LeastMemory and < 1e18
+            ? (long)(value * unit.Bytes)
+            : throw new UsageException($"'{option} {text}' is not a size of 200 MB or more with its unit, for example {option} 500MB or {option} \"4 GB\"");
     }
 
     public static TimeSpan Duration(string option, string text)

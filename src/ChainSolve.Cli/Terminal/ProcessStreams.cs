@@ -2,7 +2,7 @@ using System.Text;
 
 namespace ChainSolve.Cli.Terminal;
 
-/// <summary>What a process reads and writes besides files. Tests give their own.</summary>
+/// <summary>What a process reads and writes besides files, and what holds it. Tests give their own.</summary>
 internal sealed record ProcessStreams
 {
     private static readonly UTF8Encoding Utf8 = new(encoderShouldEmitUTF8Identifier: false);
@@ -22,6 +22,9 @@ internal sealed record ProcessStreams
     /// <summary>Reads an environment variable; null where it is not set.</summary>
     public required Func<string, string?> Environment { get; init; }
 
+    /// <summary>Holds the process to so many bytes; nothing where it belongs to somebody else.</summary>
+    public Action<long> HoldMemory { get; init; } = _ => { };
+
     /// <summary>Whether the terminal can do no more than lines.</summary>
     public bool IsDumb => Environment("TERM") == "dumb";
 
@@ -33,5 +36,6 @@ internal sealed record ProcessStreams
         Error = new StreamWriter(Console.OpenStandardError(), Utf8) { AutoFlush = true },
         ErrorIsTerminal = !Console.IsErrorRedirected,
         Environment = System.Environment.GetEnvironmentVariable,
+        HoldMemory = MemoryLimit.Set,
     };
 }

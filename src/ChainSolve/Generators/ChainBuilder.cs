@@ -15,7 +15,7 @@ internal static class ChainBuilder
 
     /// <summary>Explores the model and fills its generator.</summary>
     /// <exception cref="ModelFaultsException">A state shows a fault.</exception>
-    /// <exception cref="LimitExceededException">There are more states than the limit.</exception>
+    /// <exception cref="LimitExceededException">There are more states than allowed, or they take more memory.</exception>
     public static ExploredChain Build(BoundModel model, GivenValues givens, ExploreOptions options, SolveContext context)
     {
         var layout = StateLayout.Of(model, givens);
@@ -31,9 +31,10 @@ internal static class ChainBuilder
 
         var plans = new TransitionPlans(model, layout, options.BackEnd);
         var starts = StartMarkings.Of(model, givens, options.MaxStates);
+        var limits = new ExploreLimits(options.MaxStates, options.MaxMemory);
         var states = layout.Bits <= 64
-            ? Explorer<ulong>.Explore(new SuccessorKeys<ulong>(plans), givens, starts, options.MaxStates, context)
-            : Explorer<UInt128>.Explore(new SuccessorKeys<UInt128>(plans), givens, starts, options.MaxStates, context);
+            ? Explorer<ulong>.Explore(new SuccessorKeys<ulong>(plans), givens, starts, limits, context)
+            : Explorer<UInt128>.Explore(new SuccessorKeys<UInt128>(plans), givens, starts, limits, context);
         if (states.TransitionCount > Array.MaxLength)
         {
             throw new LimitExceededException("transitions", string.Create(

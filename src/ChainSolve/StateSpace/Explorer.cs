@@ -25,13 +25,13 @@ internal sealed class Explorer<TKey>
     private readonly SolveContext context;
     private readonly KeySet<TKey> states;
     private readonly ExploreWorker<TKey>[] workers;
-    private readonly long maxStates;
+    private readonly ExploreLimits limits;
     private readonly ExploreReport report;
 
-    private Explorer(SuccessorKeys<TKey> keys, GivenValues givens, long maxStates, int threads, SolveContext context)
+    private Explorer(SuccessorKeys<TKey> keys, GivenValues givens, ExploreLimits limits, int threads, SolveContext context)
     {
         (this.keys, this.givens, this.context) = (keys, givens, context);
-        this.maxStates = Math.Min(maxStates, Array.MaxLength);
+        this.limits = limits with { States = Math.Min(limits.States, Array.MaxLength) };
         states = KeySets.For<TKey>(keys.Plans.Layout, threads, context.Cancellation);
         workers = [.. Enumerable.Range(0, threads).Select(i => new ExploreWorker<TKey>(keys, givens, states, i, context.Cancellation))];
         report = new ExploreReport(context.Progress);
@@ -41,13 +41,13 @@ internal sealed class Explorer<TKey>
     /// <param name="keys">What the transitions do.</param>
     /// <param name="givens">The values of the givens.</param>
     /// <param name="starts">Where the model starts.</param>
-    /// <param name="maxStates">The most states.</param>
+    /// <param name="limits">How much may be explored.</param>
     /// <param name="context">Threads, cancellation and progress.</param>
     /// <remarks>The result, the faults and the limits do not depend on the number of threads.</remarks>
     /// <exception cref="LimitExceededException">There are more than the limit.</exception>
     /// <exception cref="ModelFaultsException">A state shows a fault: of those nearest to the start, the one with the smallest key is told.</exception>
     public static StateTable Explore(
-        SuccessorKeys<TKey> keys, GivenValues givens, IReadOnlyList<(int[] Marking, double Probability)> starts, long maxStates, SolveContext context)
+        SuccessorKeys<TKey> keys, GivenValues givens, IReadOnlyList<(int[] Marking, double Probability)> starts, ExploreLimits limits, SolveContext context)
     {
         // Where a compiled method does all and a map of bits takes the states, sending them costs more than finding them.
         var threads = keys.IsCompiled && KeySets.IsShort(keys.Plans.Layout) ? 1 : Math.Min(context.Threads, MostThreads);
@@ -55,7 +55,7 @@ internal sealed class Explorer<TKey>
         {
             try
             {
-                return new Explorer<TKey>(keys, givens, maxStates, threads, context).Explore(starts);
+                return new Explorer<TKey>(keys, givens, limits, threads, context).Explore(starts);
             }
             catch (LimitExceededException)
             {
@@ -63,7 +63,7 @@ internal sealed class Explorer<TKey>
             }
         }
 
-        return new Explorer<TKey>(keys, givens, maxStates, 1, context).Explore(starts);
+        return new Explorer<TKey>(keys, givens, limits, 1, context).Explore(starts);
     }
 
     private KeyedStates<TKey> Explore(IReadOnlyList<(int[] Marking, double Probability)> starts)
@@ -80,6 +80,7 @@ internal sealed class Explorer<TKey>
             {
                 report.Tell(workers.Sum(w => w.Found), workers.Sum(w => w.LookedAt), Bytes);
                 context.Cancellation.ThrowIfCancellationRequested();
+                limits.CheckStates(workers.Sum(w => w.Found), Bytes);
                 Round();
             }
 
@@ -87,7 +88,9 @@ internal sealed class Explorer<TKey>
         }
 
         states.Close(context.Cancellation);
-        return new KeyedStates<TKey>(states, keys, checked((int)workers.Sum(w => w.Found)), workers.Sum(w => w.Transitions));
+        var found = new KeyedStates<TKey>(states, keys, checked((int)workers.Sum(w => w.Found)), workers.Sum(w => w.Transitions));
+        limits.CheckTransitions(found.Count, found.TransitionCount, states.Bytes);
+        return found;
     }
 
     private long Bytes => states.Bytes + workers.Sum(w => w.Bytes);
@@ -98,14 +101,14 @@ internal sealed class Explorer<TKey>
     {
         // A worker that is alone knows all states, and stops at the very one that is too many.
         var threads = workers.Sum(w => (long)w.Left) < FewStates ? 1 : workers.Length;
-        var room = workers.Length == 1 ? maxStates : long.MaxValue;
+        var room = workers.Length == 1 ? limits.States : long.MaxValue;
         Workers.ForEach(workers, threads, w => w.Expand(StatesOfARound, room));
         Workers.ForEach(workers, threads, w => w.Collect(workers));
-        if (workers.Sum(w => w.Found) > maxStates)
+        if (workers.Sum(w => w.Found) > limits.States)
         {
             throw new LimitExceededException("states", string.Create(
                 CultureInfo.InvariantCulture,
-                $"the model has more than the {maxStates:N0} states allowed, {maxStates + 1 - workers.Sum(w => w.LookedAt):N0} of them not looked at yet; raise the limit (MaxStates, --max-states) or write alike things as one item with 'x N'"));
+                $"the model has more than the {limits.States:N0} states allowed, {limits.States + 1 - workers.Sum(w => w.LookedAt):N0} of them not looked at yet; raise the limit (MaxStates, --max-states) or write alike things as one item with 'x N'"));
         }
     }
 

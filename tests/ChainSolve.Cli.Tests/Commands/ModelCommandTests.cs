@@ -143,6 +143,8 @@ public sealed class ModelCommandTests : IDisposable
     [InlineData("solve - --method transient=squarin", "'--method transient=' does not know 'squarin'; known: squaring, uniformization, krylov; nearest: 'squaring'")]
     [InlineData("solve - --method transient=squaring --method transient=uniformization", "'--method transient=' is given twice")]
     [InlineData("solve - --tolerance 2", "'--tolerance 2' is not a number above 0 and below 1, for example --tolerance 1e-9")]
+    [InlineData("solve - --max-memory 4", "'--max-memory 4' is not a size of 200 MB or more with its unit, for example --max-memory 500MB or --max-memory \"4 GB\"")]
+    [InlineData("solve - --max-memory 20MB", "'--max-memory 20MB' is not a size of 200 MB or more with its unit, for example --max-memory 500MB or --max-memory \"4 GB\"")]
     [InlineData("solve - --set mttr", "'--set mttr' is not NAME=VALUE, for example --set mttr=\"4 h\"")]
     public async Task Run_WrongOptions_SayWhatIsWanted(string words, string message)
     {

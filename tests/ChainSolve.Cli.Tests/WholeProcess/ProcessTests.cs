@@ -90,6 +90,17 @@ public sealed class ProcessTests : IDisposable
     }
 
     [Fact]
+    public async Task Solve_MemoryLimit_EndsWithItsExitCode()
+    {
+        var model = folder.Write("endless.chain", Endless);
+
+        var outcome = await OwnProcess.RunAsync(["solve", model, "--max-states", "2000000000", "--max-memory", "200MB"]);
+
+        Assert.Equal(ExitCodes.LimitHit, outcome.ExitCode);
+        Assert.Matches("^chainsolve: (memory ran out; raise --max-memory|[0-9,]+ states (with|were found so far))", outcome.Error);
+    }
+
+    [Fact]
     public async Task Solve_FullDisk_IsAFileProblem()
     {
         if (!File.Exists("/dev/full"))
